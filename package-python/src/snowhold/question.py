@@ -49,7 +49,7 @@ class Number:
     low: float
     high: float
     unit: str
-    default: float | None | _Required = REQUIRED
+    default: float | _Required | None = REQUIRED
     null: bool = False
     whole: bool = False
     above_low: bool = False
@@ -87,7 +87,7 @@ class Choice:
     """One of a few words."""
 
     words: tuple[str, ...]
-    default: str | None | _Required = REQUIRED
+    default: str | _Required | None = REQUIRED
     null: bool = False
 
     def allowed(self) -> str:
@@ -105,7 +105,7 @@ class Choice:
 class Flag:
     """True or false."""
 
-    default: bool | None | _Required = REQUIRED
+    default: bool | _Required | None = REQUIRED
 
     def allowed(self) -> str:
         return "true or false"
@@ -121,7 +121,7 @@ class Record:
     """A dict with fields of its own; ``default`` ``{}`` fills in the fields' own defaults."""
 
     fields: Mapping[str, Field]
-    default: Mapping[str, Any] | None | _Required = REQUIRED
+    default: Mapping[str, Any] | _Required | None = REQUIRED
     null: bool = False
 
     def allowed(self) -> str:
@@ -143,7 +143,7 @@ class Items:
     of: Field
     low: int
     high: int
-    default: list[Any] | None | _Required = REQUIRED
+    default: list[Any] | _Required | None = REQUIRED
     null: bool = False
 
     def allowed(self) -> str:
@@ -160,7 +160,7 @@ class Items:
         values: list[Any] = []
         faults: list[dict[str, str]] = []
         for index, entry in enumerate(value):
-            _check_into(values.append, self.of, entry, f"{path}[{index}]", faults)
+            _check_into(values, self.of, entry, f"{path}[{index}]", faults)
         if faults:
             raise BadQuestion(faults)
         return values
@@ -188,8 +188,9 @@ def read(question: Any, fields: Mapping[str, Field], path: str = "") -> dict[str
                                  "one of " + ", ".join(fields)))
     for name, field in fields.items():
         if name in question:
-            _check_into(lambda v, name=name: values.__setitem__(name, v), field,  # type: ignore[misc]
-                        question[name], prefix + name, faults)
+            checked: list[Any] = []
+            _check_into(checked, field, question[name], prefix + name, faults)
+            values.update((name, value) for value in checked)
         elif isinstance(field.default, _Required):
             faults.append(_fault(prefix + name, "is missing", field.allowed()))
         elif isinstance(field, Record) and field.default is not None:
@@ -201,11 +202,11 @@ def read(question: Any, fields: Mapping[str, Field], path: str = "") -> dict[str
     return values
 
 
-def _check_into(put: Any, field: Field, value: Any, path: str,
+def _check_into(checked: list[Any], field: Field, value: Any, path: str,
                 faults: list[dict[str, str]]) -> None:
-    """Check one value; hand it to ``put`` or add what is wrong with it to ``faults``."""
+    """Check one value; append it to ``checked``, or what is wrong with it to ``faults``."""
     try:
-        put(field.check(value, path))
+        checked.append(field.check(value, path))
     except BadQuestion as nested:
         faults.extend(nested.faults)
     except _Fault as problem:
@@ -224,4 +225,6 @@ def _shown(value: Any) -> str:
         return repr(value[:40])
     if isinstance(value, (bool, int, float)):
         return repr(value)[:40]
-    return {dict: "an object", list: "a list"}.get(type(value), "this value")
+    if isinstance(value, Mapping):
+        return "an object"
+    return "a list" if isinstance(value, (list, tuple)) else "this value"

@@ -5,19 +5,28 @@ A formula written against ``xp`` runs on plain floats with ``xp=scalars`` and on
 of what a phone waits for.
 """
 
-from math import asin, atan, atan2, ceil, cos, exp, hypot, inf, log, nan, pi, sin, sqrt, tan
+from math import asin, atan, atan2, cos, exp, hypot, inf, isnan, log, nan, pi, sin, sqrt, tan
+from typing import Any
+
+Value = Any
+"""A float, or with ``xp=numpy`` an array; arrays broadcast against each other."""
+
+Namespace = Any
+"""Where a formula takes its functions from: this module, or numpy."""
 
 __all__ = [
+    "Namespace",
+    "Value",
     "all",
     "any",
     "asin",
     "atan",
     "atan2",
-    "ceil",
     "cos",
     "exp",
     "hypot",
     "inf",
+    "isnan",
     "log",
     "logical_and",
     "logical_not",

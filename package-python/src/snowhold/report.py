@@ -1,0 +1,68 @@
+"""Answers in words, for the command line's ``--text``."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from typing import Any
+
+VERDICTS = {"holds": "Holds", "marginal": "Marginal", "washes_out": "Washes out",
+            "too_slow": "Too slow to carve", "too_fast": "Too fast to carve"}
+
+LIMITS = {"platform": "the base tilts too little for the force on it",
+          "snow": "the snow shears before it carries the force",
+          "boot": "the boot touches the snow and lifts the edge",
+          "rider": "the load is more than the legs carry"}
+
+ZONES = {"above": "above the fall line", "on": "on the fall line", "below": "below the fall line",
+         "whole": "through the whole turn"}
+
+CAUTIONS = {
+    "estimate": "An estimate. It does not replace the judgement of patrol, an instructor or local "
+                "rules. It says nothing about avalanche danger. Closed stays closed.",
+    "avalanche": "From about 30°: see the avalanche bulletin.",
+}
+
+
+def text(question: Any, reply: dict[str, Any]) -> str:
+    """The reply to a question as lines for people."""
+    if "error" in reply:
+        return "\n".join(f"{fault['field']}: {fault['problem']} (allowed: {fault['allowed']})"
+                         for fault in reply["error"])
+    lines = _TOPICS[question["ask"]](reply)
+    return "\n".join(lines + [CAUTIONS[code] for code in reply["cautions"]])
+
+
+def turn_lines(reply: dict[str, Any]) -> list[str]:
+    """A turn's answer in lines."""
+    worst, reason = reply["worst"], reply["reason"]
+    lines = [VERDICTS[reply["verdict"]]]
+    if worst["grip_margin"] is not None:
+        verb = "gives first" if worst["grip_margin"] < 0 else "would give first"
+        lines += [
+            f"  Closest {ZONES[reason['zone']]}, at {worst['phase_deg']:.0f}° of the turn; there "
+            f"{LIMITS[worst['limit']]}: that {verb}.",
+            f"  Lean {worst['lean_deg']:.0f}° from the perpendicular to the snow, edge angle "
+            f"{worst['edge_angle_deg']:.0f}°, grip margin {worst['grip_margin']:+.0%}",
+            f"  Load {worst['load_g']:.2f} g, radius {worst['turn_radius_m']:.1f} m, edge sunk "
+            f"{_millimetres(worst['penetration_m'])}",
+        ]
+    elif reply["verdict"] == "too_slow":
+        lines.append("  Gravity alone turns tighter than the flattest carve there.")
+    else:
+        lines.append("  The board's own arc is too tight for this speed; let it drift.")
+    window = reply["carve_speed_mps"]
+    lines.append("  No speed carves this whole turn." if window is None else
+                 f"  Carves the whole turn from {window['min'] * 3.6:.0f} to "
+                 f"{window['max'] * 3.6:.0f} km/h.")
+    drift = reply["drift"]
+    lines.append("  No line holds at this speed." if drift is None else
+                 f"  Tightest line that holds: {drift['line_radius_m']:.1f} m, lean "
+                 f"{drift['lean_deg']:.0f}°, grip margin {drift['grip_margin']:+.0%}.")
+    return lines
+
+
+def _millimetres(depth_m: float | None) -> str:
+    return "out of the snow" if depth_m is None else f"{depth_m * 1000:.1f} mm"
+
+
+_TOPICS: dict[str, Callable[[dict[str, Any]], list[str]]] = {"turn": turn_lines}
