@@ -2,7 +2,7 @@
 # What the scripts share: where things are, and doing a step only when its inputs have changed.
 set -euo pipefail
 cd "$(dirname "${BASH_SOURCE[0]}")/.."
-mkdir -p .cache/stamps
+mkdir -p .cache
 
 say() { printf '\033[1m· %s\033[0m\n' "$*" >&2; }
 fail() { printf '%s\n' "$*" >&2; exit 1; }
@@ -14,19 +14,18 @@ hash_of() {
         | LC_ALL=C sort -z | xargs -0 sha256sum | sha256sum | cut -d' ' -f1
 }
 
-# once NAME RESULT "INPUTS" COMMAND…: runs the command unless RESULT exists and the inputs are those
-# of the last time. The hash is taken before the command: an edit meanwhile counts for the next time.
+# once STAMP "INPUTS" COMMAND…: runs the command unless the stamp has the hash of these inputs. The
+# stamp of an installed folder lies inside it and goes with it. The hash is taken before the
+# command: an edit meanwhile counts for the next time.
 once() {
-    local name=$1 result=$2 inputs=$3 hash
-    shift 3
+    local stamp=$1 inputs=$2 hash
+    shift 2
     # shellcheck disable=SC2086  # several inputs, split on purpose
     hash=$(hash_of $inputs)
-    if [[ -e $result && -f .cache/stamps/$name && $(<".cache/stamps/$name") == "$hash" ]]; then
-        return
-    fi
-    rm -f ".cache/stamps/$name"
+    [[ -f $stamp && $(<"$stamp") == "$hash" ]] && return
+    rm -f "$stamp"
     "$@"
-    printf '%s' "$hash" >".cache/stamps/$name"
+    printf '%s' "$hash" >"$stamp"
 }
 
 # Only one of these scripts at a time installs or builds in this tree.
@@ -65,15 +64,20 @@ npm_install() {
 
 # Everything that turns the sources into web/dist.
 build() {
-    command -v python3 >/dev/null || apt_install python3 python3-venv
-    command -v npm >/dev/null || fail "please install Node.js 20 or newer with npm"
-    once venv .venv/bin/python scripts/common.sh make_venv
-    once pip-build .venv/bin/python scripts/requirements.txt pip_install scripts/requirements.txt
-    once npm web/node_modules/esbuild "web/package.json web/package-lock.json" npm_install
-    .venv/bin/python scripts/fetch_runtime.py
-    once build web/dist/index.html \
+    install_for_build
+    [[ -e web/dist/index.html ]] || rm -f .cache/build.stamp
+    once .cache/build.stamp \
         "web package-python scripts/build_site.mjs scripts/headers.json scripts/runtime.sha256" \
         build_site
+}
+
+install_for_build() {
+    command -v python3 >/dev/null || apt_install python3 python3-venv
+    command -v npm >/dev/null || fail "please install Node.js 20 or newer with npm"
+    .venv/bin/python -m pip --version >/dev/null 2>&1 || make_venv
+    once .venv/build.stamp scripts/requirements.txt pip_install scripts/requirements.txt
+    once web/node_modules/.stamp "web/package.json web/package-lock.json" npm_install
+    .venv/bin/python scripts/fetch_runtime.py
 }
 
 build_site() {
