@@ -7,9 +7,10 @@ import path from 'node:path';
 import { createRequire } from 'node:module';
 
 const root = path.resolve(import.meta.dirname, '..');
-const web = path.join(root, 'web');
+// build_site.mjs [SOURCES [RESULT]]: the tests build a second version from changed sources.
+const web = path.resolve(process.argv[2] ?? path.join(root, 'web'));
+const target = path.resolve(process.argv[3] ?? path.join(web, 'dist'));
 const runtime = path.join(root, '.cache/runtime');
-const target = path.resolve(process.argv[2] ?? path.join(web, 'dist'));
 const out = `${target}.new`;
 const esbuild = createRequire(path.join(web, 'package.json'))('esbuild');
 
