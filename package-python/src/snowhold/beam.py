@@ -31,7 +31,8 @@ Foundation = Callable[[Array], tuple[Array, Array]]
 d in m; both 0 out of contact, and q must never fall with d."""
 
 CONVERGED_RESIDUAL = 1e-8
-"""Largest out-of-balance nodal force over the whole load at which a solve counts as converged."""
+"""Largest force out of balance, at a node or in total, over the whole load, at which a solve
+counts as converged."""
 
 _WANTED_RESIDUAL = 1e-12
 """Newton goes on to here: its last step is nearly free and squares the error."""
@@ -44,9 +45,9 @@ _MOST_HALVINGS = 40
 class Deflection:
     """Solution of :func:`deflect`.
 
-    ``deflection_m`` u and ``depth_m`` d, m, and ``push_npm`` q, N/m, at each node; ``residual``,
-    dimensionless, ``balance`` (total push over total load, less 1), ``steps`` taken and
-    ``converged`` for each case.
+    ``deflection_m`` u and ``depth_m`` d, m, and ``push_npm`` q, N/m, at each node; ``residual``
+    (largest force out of balance, at a node or in total, over the load), ``balance`` (total push
+    over total load, less 1), Newton's ``steps`` and ``converged`` for each case.
     """
 
     deflection_m: Array
@@ -76,7 +77,8 @@ def point_load(x_m: Array, at_m: float) -> Array:
     Linear between the two nodes beside it, so that force and moment are those of the load.
     """
     spacing = x_m[1] - x_m[0]
-    return np.maximum(0.0, 1 - np.abs(x_m - at_m) / spacing)
+    share: Array = np.maximum(0.0, 1 - np.abs(x_m - at_m) / spacing)
+    return share
 
 
 def curvature_matrix_pm2(x_m: Array) -> Array:
@@ -85,7 +87,8 @@ def curvature_matrix_pm2(x_m: Array) -> Array:
     matrix = np.zeros((x_m.size - 2, x_m.size))
     matrix[rows, rows] = matrix[rows, rows + 2] = 1.0
     matrix[rows, rows + 1] = -2.0
-    return matrix / (x_m[1] - x_m[0])**2
+    curvature: Array = matrix / (x_m[1] - x_m[0])**2
+    return curvature
 
 
 def deflect(x_m: Array, stiffness_nm2: Array, free_shape_m: Array, load_n: Array, offset_m: Array,
@@ -109,7 +112,7 @@ def deflect(x_m: Array, stiffness_nm2: Array, free_shape_m: Array, load_n: Array
     bend = curvature_matrix_pm2(x_m)
     weights = weights_m(x_m)
     moment_per_curvature = stiffness_nm2 * (x_m[1] - x_m[0])
-    stiffness = np.einsum("ki,bk,kj->bij", bend, moment_per_curvature, bend, optimize=True)
+    stiffness: Array = np.matmul(bend.T * moment_per_curvature[:, None, :], bend)
     free_curvature = bend @ free_shape_m
     total_n = np.abs(load_n).sum(axis=1)
     diagonal = np.arange(x_m.size)
@@ -121,41 +124,48 @@ def deflect(x_m: Array, stiffness_nm2: Array, free_shape_m: Array, load_n: Array
         moments = moment_per_curvature * (u @ bend.T - free_curvature)
         return moments @ bend + weights * push - load_n, weights * slope * sink
 
+    def relative(force_n: Array) -> Array:
+        # Bending moments add up to no force, so the sum is push less load.
+        worst: Array = np.maximum(np.abs(force_n).max(axis=1), np.abs(force_n.sum(axis=1)))
+        share: Array = worst / total_n
+        return share
+
     u = start_m.copy()
     force, slope = out_of_balance(u)
-    residual = np.abs(force).max(axis=1) / total_n
+    residual = relative(force)
     best_u, best_residual = u, residual
     steps = np.zeros(len(u), dtype=np.int64)
+    done = residual <= _WANTED_RESIDUAL
     for _ in range(_MOST_STEPS):
-        active = (best_residual > _WANTED_RESIDUAL) & np.isfinite(residual)
-        # Rounding has the last word where a converged case no longer improves.
-        active &= ~((best_residual < CONVERGED_RESIDUAL) & (residual > 0.25 * best_residual)
-                    & (steps > 0) & (residual != best_residual))
-        if not active.any():
+        if done.all():
             break
         jacobian = stiffness.copy()
         jacobian[:, diagonal, diagonal] += slope
         step = -np.linalg.solve(jacobian, force[..., None])[..., 0]
-        size = np.where(active, 1.0, 0.0)[:, None]
-        descent = (force * step).sum(axis=1)
+        step[done] = 0.0
+        descent = np.abs((force * step).sum(axis=1))
+        rough = ~done & (residual > CONVERGED_RESIDUAL)
         for _ in range(_MOST_HALVINGS):
-            trial_force, trial_slope = out_of_balance(u + size * step)
-            # E is convex along the step: its slope rises from `descent` < 0 through the minimum.
-            # A slope far above 0 means that the step went far past it.
-            past = (trial_force * step).sum(axis=1) > 0.9 * np.abs(descent)
-            past &= active & (residual > CONVERGED_RESIDUAL)
+            trial_force, trial_slope = out_of_balance(u + step)
+            # E is convex along the step: its slope rises from -descent through 0 at the least E.
+            # A slope far above 0 means that the step went far past that.
+            past = rough & ((trial_force * step).sum(axis=1) > 0.9 * descent)
             if not past.any():
                 break
-            size = np.where(past[:, None], size / 2, size)
-        u, force, slope = u + size * step, trial_force, trial_slope
-        residual = np.abs(force).max(axis=1) / total_n
-        steps += active
+            step[past] *= 0.5
+            descent[past] *= 0.5
+        u, force, slope = u + step, trial_force, trial_slope
+        before, residual = residual, relative(force)
+        steps += ~done
         better = residual < best_residual
         best_u = np.where(better[:, None], u, best_u)
         best_residual = np.where(better, residual, best_residual)
+        # Below the bound a step that does not help any more has met rounding.
+        done |= best_residual <= _WANTED_RESIDUAL
+        done |= (best_residual <= CONVERGED_RESIDUAL) & (residual > 0.25 * before)
 
     depth = sink * best_u + offset_m
     push, _ = foundation(depth)
     balance = (weights * push).sum(axis=1) / load_n.sum(axis=1) - 1
-    converged = (best_residual <= CONVERGED_RESIDUAL) & (np.abs(balance) <= CONVERGED_RESIDUAL)
+    converged = best_residual <= CONVERGED_RESIDUAL
     return Deflection(best_u, depth, push, best_residual, balance, steps, converged)
