@@ -2,6 +2,7 @@
 
 import io
 import json
+import os
 import subprocess
 import sys
 
@@ -29,7 +30,8 @@ def test_as_a_program_from_a_file(tmp_path):
     file = tmp_path / "question.json"
     file.write_text(json.dumps(QUESTION))
     done = subprocess.run([sys.executable, "-m", "snowhold", str(file)], capture_output=True,
-                          text=True, check=True)
+                          text=True, check=True,
+                          env={**os.environ, "PYTHONPATH": os.pathsep.join(sys.path)})
     assert json.loads(done.stdout) == snowhold.answer(QUESTION)
 
 

@@ -153,7 +153,7 @@ def test_banking_past_the_platform_still_balances(angulation_deg, pitch_deg):
     checked = 0
     for speed in (3, 5, 7, 9):
         for phase in np.linspace(0, math.pi, 7):
-            lean, _, too_fast = balanced_lean(speed, 8, pitch, float(phase), angulation)
+            lean, _, _ = balanced_lean(speed, 8, pitch, float(phase), angulation)
             expected = scipy_edge(speed, 8, pitch, phase, angulation)
             if not math.isnan(lean) and not isinstance(expected, str):
                 assert lean + angulation == pytest.approx(expected, abs=1e-8)

@@ -134,9 +134,9 @@ def test_states_at_their_thresholds(lean_deg, word):
 def test_clearance_of_a_usual_board():
     """Trigonometry: 250 mm wide, 10 mm of roughness and no sinking is asin(0.04) = 2.29°; with
     11 mm of sinking 4.8°, the upper end of the 2-5° stated for a usual board."""
-    assert math.degrees(clearance_angle_rad(0.0, 0.25)) == pytest.approx(2.292, abs=0.001)
-    assert math.degrees(clearance_angle_rad(0.011, 0.25)) == pytest.approx(4.818, abs=0.001)
-    assert math.isnan(clearance_angle_rad(0.3, 0.25))
+    assert math.degrees(clearance_angle_rad(0.0, 0.25, 0.010)) == pytest.approx(2.292, abs=0.001)
+    assert math.degrees(clearance_angle_rad(0.011, 0.25, 0.010)) == pytest.approx(4.818, abs=0.001)
+    assert math.isnan(clearance_angle_rad(0.3, 0.25, 0.010))
 
 
 def test_needed_force_and_capacity_share_one_balance():

@@ -28,6 +28,9 @@ LEAST_LEAN_RAD = 1e-9
 """A lean below this is no lean, and the phase is too slow: a margin needs a force to compare with.
 Assumed; a billionth of a radian is nothing on a hill."""
 
+_STEPS = 60
+"""Newton steps at the most: next to a double root each one only halves the distance."""
+
 _SMALL_ANGULATION_RAD = 1e-6
 """Below this the fastest carve is that of no angulation: the two differ by less than 1e-5."""
 
@@ -43,6 +46,14 @@ def fall_line_pull(pitch_rad: Value, phase_rad: Value, xp: Namespace = scalars) 
     return xp.tan(pitch_rad) * xp.cos(phase_rad)
 
 
+def carve_number_of(tan_lean: Value, pull: Value, angulation_rad: Value,
+                    xp: Namespace = scalars) -> Value:
+    """The κ that a lean balances on the carved radius, (u + t)(cos a − u sin a)/√(1 + u²): P = 0.
+    """
+    return ((tan_lean + pull) * (xp.cos(angulation_rad) - tan_lean * xp.sin(angulation_rad))
+            / xp.sqrt(1 + tan_lean**2))
+
+
 def balanced_lean(speed_mps: Value, sidecut_radius_m: Value, pitch_rad: Value, phase_rad: Value,
                   angulation_rad: Value, xp: Namespace = scalars) -> tuple[Value, Value, Value]:
     """Lean of the balanced carve: ``(lean_rad, too_slow, too_fast)``.
@@ -54,29 +65,68 @@ def balanced_lean(speed_mps: Value, sidecut_radius_m: Value, pitch_rad: Value, p
     """
     kappa = carve_number(speed_mps, sidecut_radius_m, pitch_rad, xp)
     pull = fall_line_pull(pitch_rad, phase_rad, xp)
-    sin_a, cos_a, tan_a = xp.sin(angulation_rad), xp.cos(angulation_rad), xp.tan(angulation_rad)
-
-    too_slow = xp.logical_or(kappa <= pull * cos_a, kappa < pull - tan_a)
-    # P is concave for a ≥ 0 and negative at the start, so Newton's steps grow toward the first
-    # root without passing it; a slope that is no longer positive shows that there is none.
-    tan_lean = xp.maximum(0.0, -tan_a) + 0.0 * (kappa + pull)
-    for _ in range(60):
-        root = xp.sqrt(1 + tan_lean**2)
-        value = (tan_lean + pull) * (cos_a - tan_lean * sin_a) - kappa * root
-        slope = cos_a - (2 * tan_lean + pull) * sin_a - kappa * tan_lean / root
-        rising = slope > 0
-        step = -value / xp.where(rising, slope, 1.0)
-        moving = xp.logical_and(rising, abs(step) > 1e-15 * (1 + tan_lean))
-        moving = xp.logical_and(moving, xp.logical_not(too_slow))
-        if not xp.any(moving):
-            break
-        tan_lean = xp.where(moving, tan_lean + step, tan_lean)
-    too_fast = xp.logical_and(xp.logical_not(rising), xp.logical_not(too_slow))
+    tan_a = xp.tan(angulation_rad)
+    too_slow = xp.logical_or(kappa <= pull * xp.cos(angulation_rad), kappa < pull - tan_a)
+    first_root = _first_root if xp is scalars else _first_roots
+    tan_lean, too_fast = first_root(kappa, pull, xp.sin(angulation_rad), xp.cos(angulation_rad),
+                                    xp.maximum(0.0, -tan_a), too_slow)
     lean_rad = xp.atan(tan_lean)
-    too_slow = xp.logical_or(too_slow, xp.logical_and(xp.logical_not(too_fast),
-                                                      lean_rad <= LEAST_LEAN_RAD))
-    lean_rad = xp.where(xp.logical_or(too_slow, too_fast), xp.nan, lean_rad)
-    return lean_rad, too_slow, too_fast
+    balanced = xp.logical_not(xp.logical_or(too_slow, too_fast))
+    too_slow = xp.logical_or(too_slow, xp.logical_and(balanced, lean_rad <= LEAST_LEAN_RAD))
+    return xp.where(xp.logical_or(too_slow, too_fast), xp.nan, lean_rad), too_slow, too_fast
+
+
+def _newton_step(tan_lean: Value, kappa: Value, pull: Value, sin_a: Value, cos_a: Value,
+                 xp: Namespace) -> tuple[Value, Value, Value]:
+    """Newton's step for P from ``tan_lean``: ``(step, rising, worth taking)``.
+
+    P is concave for a ≥ 0 and negative at the start, so the steps grow toward the first root
+    without passing it (a step back is rounding); a slope that is no longer positive shows that
+    there is none.
+    """
+    root = xp.sqrt(1 + tan_lean**2)
+    value = (tan_lean + pull) * (cos_a - tan_lean * sin_a) - kappa * root
+    slope = cos_a - (2 * tan_lean + pull) * sin_a - kappa * tan_lean / root
+    rising = slope > 0
+    step = -value / xp.where(rising, slope, 1.0)
+    forward = xp.where(sin_a >= 0, step, abs(step))
+    return step, rising, xp.logical_and(rising, forward > 1e-15 * (1 + tan_lean))
+
+
+def _first_root(kappa: float, pull: float, sin_a: float, cos_a: float, start: float,
+                skip: bool) -> tuple[float, bool]:
+    """Smallest root of P from ``start`` up, and whether there is none, for plain floats."""
+    tan_lean, rising, worth = start, True, not skip
+    for _ in range(_STEPS):
+        if not worth:
+            break
+        step, rising, worth = _newton_step(tan_lean, kappa, pull, sin_a, cos_a, scalars)
+        if worth:
+            tan_lean += step
+    return tan_lean, not rising
+
+
+def _first_roots(kappa: Value, pull: Value, sin_a: Value, cos_a: Value, start: Value,
+                 skip: Value) -> tuple[Value, Value]:
+    """:func:`_first_root` for arrays: each step is taken only by those that still move."""
+    import numpy as np
+
+    shape = np.broadcast_shapes(*(np.shape(v) for v in (kappa, pull, sin_a, skip)))
+    tan_lean, none = np.empty(shape), np.zeros(shape, dtype=bool)
+    tan_lean[...] = start
+    roots, missing = tan_lean.reshape(-1), none.reshape(-1)
+    moving = np.flatnonzero(~np.broadcast_to(skip, shape).reshape(-1))
+    given = [np.broadcast_to(v, shape).reshape(-1)[moving] for v in (kappa, pull, sin_a, cos_a)]
+    for _ in range(_STEPS):
+        kappa_now, pull_now, sin_now, cos_now = given
+        step, rising, worth = _newton_step(roots[moving], kappa_now, pull_now, sin_now, cos_now,
+                                           np)
+        missing[moving[~rising]] = True
+        moving, given = moving[worth], [v[worth] for v in given]
+        if not moving.size:
+            break
+        roots[moving] += step[worth]
+    return tan_lean, none
 
 
 def slowest_mps(sidecut_radius_m: Value, pitch_rad: Value, phase_rad: Value,
@@ -111,7 +161,7 @@ def fastest(sidecut_radius_m: Value, pitch_rad: Value, phase_rad: Value, angulat
         tan_lean = tan_lean - step
         if not xp.any(step > 1e-15 * tan_lean):
             break
-    kappa_angulated = (tan_lean + pull) * (cos_a - tan_lean * sin_a) / xp.sqrt(1 + tan_lean**2)
+    kappa_angulated = carve_number_of(tan_lean, pull, a_rad, xp)
     above = pull > 0
     kappa_straight = xp.where(above, xp.sqrt(1 + pull**2), 1.0)
     edge_straight = xp.where(above, xp.pi / 2 - xp.atan(pull), xp.pi / 2)

@@ -9,3 +9,6 @@ HOLDS_MARGIN = 0.15
 AVALANCHE_PITCH_DEG = 30.0
 """Pitch from which the app points to the avalanche bulletin. Slab avalanches are released mostly
 from about 30° up: common practice, no source."""
+
+GROOMED_ROUGHNESS_M = 0.010
+"""Height r of the bumps of a groomed surface, m. Assumed."""

@@ -32,12 +32,12 @@ def largest_lean(pitch_rad: float, angulation_rad: float, normal_force_n: float,
     """Largest lean such that it and every smaller one hold with ``margin``, rad.
 
     0 or less: no lean holds. Never past ε = 90°, where the base turns away from the snow.
-    ``angulation_rad`` from 0, ``margin`` above 0.
+    ``angulation_rad`` and ``margin`` from 0.
     """
     need = 1 + margin
     leans_rad = [pi / 2 - angulation_rad]
-    sine = sin(angulation_rad) * (need + 1) / (need - 1)
-    if sine <= 1:
+    if margin > 0 and sin(angulation_rad) * (need + 1) <= need - 1:
+        sine = sin(angulation_rad) * (need + 1) / (need - 1)
         leans_rad.append((asin(sine) - angulation_rad) / 2)
     crush = need**2 * hardness_npm3 * normal_force_n / (2 * shear_strength_pa**2
                                                         * effective_edge_m)

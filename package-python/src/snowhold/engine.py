@@ -8,7 +8,10 @@ from typing import Any
 
 from snowhold.question import BadQuestion, Choice
 
-TOPICS = {"turn": "snowhold.turn"}
+TOPICS = {
+    "turn": "snowhold.turn",
+    "window": "snowhold.window",
+}
 """What can be asked, and the module whose ``answer(question)`` answers it. Modules are imported
 when first asked for: the first verdict on a phone waits only for what it needs."""
 

@@ -17,7 +17,7 @@ References
 from __future__ import annotations
 
 from snowhold import scalars
-from snowhold.constants import G0_MPS2, HOLDS_MARGIN
+from snowhold.constants import G0_MPS2, GROOMED_ROUGHNESS_M, HOLDS_MARGIN
 from snowhold.scalars import Namespace, Value
 
 LIMITS = ("platform", "snow", "boot", "rider")
@@ -25,10 +25,6 @@ LIMITS = ("platform", "snow", "boot", "rider")
 
 STATES = ("washes_out", "too_fast", "too_slow", "marginal", "holds")
 """States of a phase, worst first."""
-
-ROUGHNESS_M = 0.010
-"""Roughness r of a groomed surface, m. Assumed; more on chopped snow."""
-
 
 def penetration_m(normal_force_n: Value, effective_edge_m: Value, edge_angle_rad: Value,
                   hardness_npm3: Value, xp: Namespace = scalars) -> Value:
@@ -71,10 +67,10 @@ def least_capacity(normal_force_n: Value, edge_angle_rad: Value, mass_kg: Value,
     ``(capacity_n, limit_index, penetration_m)``.
 
     ``limit_index`` counts in :data:`LIMITS`. Without a ``drag_angle_rad`` the boot never drags.
-    A base tilted 90° or more no longer faces the snow: its platform carries nothing (assumed),
-    and its depth is NaN.
+    A base tilted away from the turn (ε < 0), or by 90° or more so that it no longer faces the
+    snow, carries nothing (assumed), and its depth is NaN.
     """
-    faces_snow = edge_angle_rad < xp.pi / 2
+    faces_snow = xp.logical_and(edge_angle_rad >= 0, edge_angle_rad < xp.pi / 2)
     edge_rad = xp.where(faces_snow, edge_angle_rad, 0.0)
     depth_m = penetration_m(normal_force_n, effective_edge_m, edge_rad, hardness_npm3, xp)
     boot_n = xp.inf
@@ -107,7 +103,8 @@ def state(grip_margin: float) -> str:
     return "marginal" if grip_margin >= 0 else "washes_out"
 
 
-def clearance_angle_rad(penetration_m: Value, width_m: Value, roughness_m: Value = ROUGHNESS_M,
+def clearance_angle_rad(penetration_m: Value, width_m: Value,
+                        roughness_m: Value = GROOMED_ROUGHNESS_M,
                         xp: Namespace = scalars) -> Value:
     """Least edge angle that keeps the leading edge of a drifting board clear of the snow, rad.
 
@@ -117,3 +114,34 @@ def clearance_angle_rad(penetration_m: Value, width_m: Value, roughness_m: Value
     """
     lift = (penetration_m + roughness_m) / width_m
     return xp.where(lift <= 1, xp.asin(xp.where(lift <= 1, lift, 0.0)), xp.nan)
+
+
+def edge_catch_rad(normal_force_n: float, effective_edge_m: float, width_m: float,
+                   hardness_npm3: float, roughness_m: float) -> float:
+    """Edge angle from which the leading edge is clear at the depth that very angle gives, rad.
+
+    NaN where no tilt clears it.
+    """
+    angle_rad = 0.0
+    # Steeper is deeper and deeper asks for steeper, ever less so: from below the steps rise to
+    # the answer.
+    for _ in range(60):
+        depth_m = penetration_m(normal_force_n, effective_edge_m, angle_rad, hardness_npm3)
+        next_rad = float(clearance_angle_rad(depth_m, width_m, roughness_m))
+        if not next_rad - angle_rad > 1e-12:
+            return next_rad
+        angle_rad = next_rad
+    return angle_rad
+
+
+def least_edge_rad(lean_rad: Value, normal_force_n: Value, effective_edge_m: Value,
+                   hardness_npm3: Value, shear_strength_pa: Value, margin: float,
+                   xp: Namespace = scalars) -> Value:
+    """Flattest edge at which platform and snow hold a lean with ``margin``, rad.
+
+    Platform: tan ε ≥ k tan λ. Snow: S_f e L ≥ k N tan λ, with e from the edge's sinking, is
+    tan ε ≥ k² tan²λ H_V N/(2 S_f² L). k is 1 + margin.
+    """
+    tan_lean = (1 + margin) * xp.tan(lean_rad)
+    crush = hardness_npm3 * normal_force_n / (2 * shear_strength_pa**2 * effective_edge_m)
+    return xp.atan(xp.maximum(tan_lean, crush * tan_lean**2))

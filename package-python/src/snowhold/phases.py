@@ -12,9 +12,10 @@ from math import ceil, pi
 from snowhold import scalars
 from snowhold.balance import centre_force_n, lean_rad, load_g, normal_force_n
 from snowhold.carve import LEAST_LEAN_RAD, balanced_lean
-from snowhold.grip import grip_margin, least_capacity
+from snowhold.constants import HOLDS_MARGIN
+from snowhold.grip import grip_margin, least_capacity, least_edge_rad
 from snowhold.scalars import Namespace, Value
-from snowhold.sidecut import carved_radius_m
+from snowhold.sidecut import carved_radius_m, drift_angle_rad, groove_width_m
 
 STEP_DEG = 5
 """Widest step between the phases of a whole turn, degrees."""
@@ -56,6 +57,19 @@ class Phases:
     too_slow: Value
     too_fast: Value
     pivoted: Value
+
+
+@dataclass(frozen=True)
+class Slip:
+    """How a turn drifts at its phases, NaN where there is no balance.
+
+    ``least_edge_rad``: flattest edge that would hold that lean with margin. ``drift_angle_rad``
+    and ``groove_width_m``: :mod:`snowhold.sidecut`; 0 where the board runs along its own arc.
+    """
+
+    least_edge_rad: Value
+    drift_angle_rad: Value
+    groove_width_m: Value
 
 
 def ridden_phases_deg(from_phase_deg: float) -> list[float]:
@@ -106,3 +120,14 @@ def ride(turn: Turn, phase_rad: Value, xp: Namespace = scalars) -> Phases:
                   limit_index=limit_index,
                   penetration_m=xp.where(balanced, depth_m, xp.nan),
                   too_slow=too_slow, too_fast=too_fast, pivoted=pivoted)
+
+
+def slip(turn: Turn, phases: Phases, xp: Namespace = scalars) -> Slip:
+    """How the turn drifts at the phases that :func:`ride` gave."""
+    own_arc_m = carved_radius_m(turn.sidecut_radius_m, phases.edge_rad, xp)
+    given = turn.effective_edge_m, own_arc_m, phases.turn_radius_m
+    return Slip(
+        least_edge_rad=least_edge_rad(
+            phases.lean_rad, normal_force_n(turn.rider_mass_kg, turn.pitch_rad, xp),
+            turn.effective_edge_m, turn.hardness_npm3, turn.shear_strength_pa, HOLDS_MARGIN, xp),
+        drift_angle_rad=drift_angle_rad(*given), groove_width_m=groove_width_m(*given))

@@ -49,3 +49,19 @@ def carved_radius_sunk_m(sidecut_radius_m: Value, effective_edge_m: Value, edge_
     depth_m = sidecut_depth_m(effective_edge_m, sidecut_radius_m)
     return effective_edge_m**2 / (8 * (depth_m / xp.cos(edge_angle_rad)
                                        + extra_depth_m * xp.tan(edge_angle_rad)))
+
+
+def drift_angle_rad(effective_edge_m: Value, own_arc_m: Value, turn_radius_m: Value) -> Value:
+    """Angle between the edge and the track at the edge's ends, (L/2)(1/R_own − 1/R), rad.
+
+    An edge whose own arc is R_own, led along a track of radius R, lies along it only at the
+    waist; toward its ends it stands across it by the difference of the two curvatures. Plain
+    geometry for arcs shallow against L; 0 on the board's own arc.
+    """
+    return effective_edge_m / 2 * (1 / own_arc_m - 1 / turn_radius_m)
+
+
+def groove_width_m(effective_edge_m: Value, own_arc_m: Value, turn_radius_m: Value) -> Value:
+    """Width that the drifting edge sweeps, (L²/8)(1/R_own − 1/R), m: the difference of the two
+    arcs' depths; 0 on the board's own arc."""
+    return effective_edge_m**2 / 8 * (1 / own_arc_m - 1 / turn_radius_m)

@@ -20,6 +20,8 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 
+from snowhold.constants import GROOMED_ROUGHNESS_M
+
 
 @dataclass(frozen=True)
 class Span:
@@ -41,6 +43,8 @@ class Snow:
     ``hardness_npm3`` H_V: force that a volume of pressed-in edge meets, N/m³.
     ``shear_strength_pa`` S_f: shear stress at which the groove wall fails, Pa.
     ``glide_friction`` μ: sliding friction of the base, dimensionless.
+    ``roughness_m`` r: height of the surface's bumps, m: 10 mm on groomed snow, more on chop, all
+    assumed.
     """
 
     code: str
@@ -48,12 +52,14 @@ class Snow:
     hardness_npm3: Span
     shear_strength_pa: Span
     glide_friction: Span
+    roughness_m: float
 
 
 def _snow(code: str, name: str, hardness_npmm3: tuple[float, float, float],
-          shear_npmm2: tuple[float, float, float], glide: tuple[float, float, float]) -> Snow:
+          shear_npmm2: tuple[float, float, float], glide: tuple[float, float, float],
+          roughness_m: float = GROOMED_ROUGHNESS_M) -> Snow:
     return Snow(code, name, Span(*hardness_npmm3).scaled(1e9), Span(*shear_npmm2).scaled(1e6),
-                Span(*glide))
+                Span(*glide), roughness_m)
 
 
 # Each triple is value, lowest, highest, in N/mm³, N/mm² and 1: assumed, inside the ranges of
@@ -63,7 +69,7 @@ SNOWS = {
     for snow in (
         _snow("F", "fresh, unpacked", (0.04, 0.04, 0.06), (0.04, 0.04, 0.08), (0.10, 0.06, 0.14)),
         _snow("4F", "soft, chopped, slush", (0.05, 0.04, 0.08), (0.10, 0.06, 0.16),
-              (0.07, 0.04, 0.14)),
+              (0.07, 0.04, 0.14), roughness_m=0.025),
         _snow("1F", "soft groomed", (0.06, 0.04, 0.12), (0.20, 0.12, 0.28), (0.05, 0.03, 0.08)),
         _snow("P", "firm groomed", (0.12, 0.06, 0.30), (0.30, 0.20, 0.40), (0.04, 0.026, 0.06)),
         _snow("K", "hard, scraped", (0.70, 0.30, 2.0), (0.45, 0.35, 0.50), (0.03, 0.026, 0.05)),

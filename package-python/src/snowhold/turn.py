@@ -8,18 +8,20 @@ range; the modules of the formulas, put together in :mod:`snowhold.phases`, give
 from __future__ import annotations
 
 from dataclasses import replace
-from math import cos, degrees, isfinite, isnan, pi, radians, sin
+from math import degrees, isfinite, isnan, radians
 from typing import Any
 
 from snowhold.arrays import numpy_or_none
 from snowhold.balance import normal_force_n
-from snowhold.carve import fastest, speed_window_mps
+from snowhold.carve import speed_window_mps
+from snowhold.changes import DEFAULT_SPREAD, changes
 from snowhold.constants import AVALANCHE_PITCH_DEG
-from snowhold.drift import largest_lean, tightest_line_m
-from snowhold.grip import LIMITS, STATES, state
-from snowhold.phases import Phases, Turn, ridden_phases_deg, ride
-from snowhold.question import Choice, Field, Number, read
+from snowhold.grip import edge_catch_rad
+from snowhold.hold import hold_lines_m, hold_window_mps, widest_arc_m
+from snowhold.phases import Turn, ridden_phases_deg
+from snowhold.question import Choice, Field, Flag, Number, Record, read
 from snowhold.snow import SNOWS
+from snowhold.turn_table import path_m, reason, table, worst_row
 
 FIELDS: dict[str, Field] = {
     "ask": Choice(("turn",)),
@@ -35,8 +37,23 @@ FIELDS: dict[str, Field] = {
     "drag_angle_deg": Number(5, 90, "degrees", default=None, null=True),
     "phase_deg": Number(0, 180, "degrees", default=None, null=True),
     "from_phase_deg": Number(0, 80, "degrees", default=0),
+    "waist_m": Number(0.15, 0.40, "m", default=0.25),
+    "spread": Record({
+        "pitch_deg": Number(0, 5, "degrees", default=DEFAULT_SPREAD["pitch_deg"]),
+        "speed_share": Number(0, 0.5, "", default=DEFAULT_SPREAD["speed_share"]),
+        "sidecut_share": Number(0, 0.3, "", default=DEFAULT_SPREAD["sidecut_share"]),
+        "angulation_deg": Number(0, 10, "degrees", default=DEFAULT_SPREAD["angulation_deg"]),
+        "line_share": Number(0, 0.5, "", default=DEFAULT_SPREAD["line_share"]),
+        "snow_share": Number(0, 1, "", default=DEFAULT_SPREAD["snow_share"]),
+    }, default={}),
+    "samples": Number(0, 200_000, "", default=2048, whole=True),
+    "suggest": Flag(default=True),
 }
 """What a turn question may hold: ranges wide enough for children and racers (assumed)."""
+
+RANGES = {name: (field.low, field.high) for name, field in FIELDS.items()
+          if isinstance(field, Number)}
+"""Lowest and highest allowed value of each number."""
 
 
 def answer(question: dict[str, Any]) -> dict[str, Any]:
@@ -44,12 +61,13 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
     values = read(question, FIELDS)
     turn = turn_of(values)
     whole_deg = ridden_phases_deg(values["from_phase_deg"])
-    whole = table(turn, whole_deg)
     asked_deg = values["phase_deg"]
-    rows = whole if asked_deg is None else table(turn, [asked_deg])
+    rows = table(turn, whole_deg if asked_deg is None else [asked_deg])
     worst = worst_row(rows)
-    window = carve_window(turn)
-    drift = tightest_line(turn)
+    catch_rad = edge_catch_rad(
+        normal_force_n(turn.rider_mass_kg, turn.pitch_rad), turn.effective_edge_m,
+        values["waist_m"], turn.hardness_npm3, SNOWS[values["snow"]].roughness_m)
+    drift = tightest_line(turn, catch_rad)
     return {
         "verdict": rows["state"][worst],
         **rows,
@@ -59,16 +77,35 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
         "first_fail_phase_deg": next(
             (phase for phase, at in zip(rows["phase_deg"], rows["state"], strict=True)
              if at not in ("holds", "marginal")), None),
-        "reason": _reason(rows, worst),
-        "carve_speed_mps": window,
+        "reason": reason(rows, worst),
+        "carve_speed_mps": carve_window(turn),
+        "hold_speed_mps": hold_window(turn),
         "drift": drift,
-        "picture": {
-            "path_m": path_m(turn, whole),
-            "drift_path_m": None if drift is None else path_m(
-                replace(turn, line_radius_m=drift["line_radius_m"]), whole),
+        "edge_catch": {
+            "clearance_angle_deg": None if isnan(catch_rad) else degrees(catch_rad),
+            "phases_deg": [] if turn.line_radius_m is None else phases_under(rows, catch_rad),
         },
+        "picture": {
+            "path_m": path_m(turn, whole_deg),
+            "own_path_m": None if turn.line_radius_m is None else path_m(
+                replace(turn, line_radius_m=None), whole_deg),
+            "drift_path_m": None if drift is None else path_m(
+                replace(turn, line_radius_m=drift["line_radius_m"]), whole_deg),
+        },
+        **_how_sure(turn, values, rows["phase_deg"]),
+        "changes": changes(turn, values, RANGES) if values["suggest"] else None,
         "cautions": cautions(values["pitch_deg"]),
     }
+
+
+def _how_sure(turn: Turn, values: dict[str, Any], phases_deg: list[float]) -> dict[str, Any]:
+    """Chance and band of :mod:`snowhold.sure`; nulls without numpy or without samples."""
+    if values["samples"] == 0 or numpy_or_none() is None:
+        return {"chance_holds": None, "chances": None, "margin_band": None,
+                "balanced_share": None}
+    from snowhold.sure import how_sure
+
+    return how_sure(turn, SNOWS[values["snow"]], values["spread"], phases_deg, values["samples"])
 
 
 def turn_of(values: dict[str, Any]) -> Turn:
@@ -86,73 +123,6 @@ def turn_of(values: dict[str, Any]) -> Turn:
         from_phase_rad=radians(values["from_phase_deg"]))
 
 
-def table(turn: Turn, phases_deg: list[float]) -> dict[str, list[Any]]:
-    """The turn at these phases as the answer's lists, one entry a phase."""
-    numpy = numpy_or_none()
-    if numpy is None:
-        rows = [ride(turn, radians(phase)) for phase in phases_deg]
-    else:
-        rows = _rows(ride(turn, numpy.radians(phases_deg), numpy), len(phases_deg), numpy)
-    return {
-        "phase_deg": [float(phase) for phase in phases_deg],
-        "lean_deg": [_deg_or_none(row.lean_rad) for row in rows],
-        "edge_angle_deg": [_deg_or_none(row.edge_rad) for row in rows],
-        "turn_radius_m": [_or_none(row.turn_radius_m) for row in rows],
-        "load_g": [_or_none(row.load_g) for row in rows],
-        "grip_margin": [_or_none(row.grip_margin) for row in rows],
-        "limit": [None if isnan(row.grip_margin) else LIMITS[int(row.limit_index)]
-                  for row in rows],
-        "state": [state_of(row) for row in rows],
-        "penetration_m": [_or_none(row.penetration_m) for row in rows],
-        "pivoted": [bool(row.pivoted) for row in rows],
-    }
-
-
-def _rows(phases: Phases, count: int, numpy: Any) -> list[Phases]:
-    """Arrays over phases as one record of plain numbers a phase."""
-    columns = [numpy.broadcast_to(column, count).tolist() for column in vars(phases).values()]
-    return [Phases(*row) for row in zip(*columns, strict=True)]
-
-
-def state_of(row: Phases) -> str:
-    """The state of one phase."""
-    if row.too_slow:
-        return "too_slow"
-    if row.too_fast:
-        return "too_fast"
-    return state(row.grip_margin)
-
-
-def worst_row(rows: dict[str, list[Any]]) -> int:
-    """Index of the worst phase: by state, then by margin.
-
-    Without a margin: the first of the phases that are too slow and the last of those that are
-    too fast, where each is furthest from balance.
-    """
-    def badness(index: int) -> tuple[float, float]:
-        at = rows["state"][index]
-        margin = rows["grip_margin"][index]
-        if margin is None:
-            margin = -index if at == "too_fast" else index
-        return STATES.index(at), margin
-
-    return min(range(len(rows["state"])), key=badness)
-
-
-def _reason(rows: dict[str, list[Any]], worst: int) -> dict[str, Any]:
-    """What the verdict rests on, as codes: state, limit and where in the turn."""
-    same = [at == rows["state"][worst] for at in rows["state"]]
-    steady = len({round(value or 0.0, 9) for value in rows["lean_deg"]}) == 1
-    phase_deg = rows["phase_deg"][worst]
-    if all(same) and steady:
-        zone = "whole"
-    elif phase_deg < 80:
-        zone = "above"
-    else:
-        zone = "on" if phase_deg <= 100 else "below"
-    return {"state": rows["state"][worst], "limit": rows["limit"][worst], "zone": zone}
-
-
 def carve_window(turn: Turn) -> dict[str, float] | None:
     """Slowest and fastest speed of a balanced carve over the whole turn; None: no speed."""
     slowest, fastest_mps = speed_window_mps(turn.sidecut_radius_m, turn.pitch_rad,
@@ -160,72 +130,51 @@ def carve_window(turn: Turn) -> dict[str, float] | None:
     return {"min": slowest, "max": fastest_mps} if slowest < fastest_mps else None
 
 
-def tightest_line(turn: Turn) -> dict[str, Any] | None:
+def hold_window(turn: Turn) -> dict[str, float] | None:
+    """Slowest and fastest speed at which the whole turn holds with margin; None: no speed."""
+    slowest, fastest = hold_window_mps(turn)
+    return {"min": slowest, "max": fastest} if slowest < fastest else None
+
+
+def tightest_line(turn: Turn, catch_rad: float) -> dict[str, Any] | None:
     """The tightest line that holds with margin at this speed over the ridden turn; None: none.
 
     It and every wider line hold, at each phase in which the edge is loaded toward the centre,
     and none is tighter than the board's own arc (``bounded_by`` "sidecut" where that is what
-    sets it).
+    sets it). ``edge_catch_phases_deg``: where its edge angle is under ``catch_rad``.
     """
-    lean_rad = largest_lean(
-        turn.pitch_rad, turn.angulation_rad, normal_force_n(turn.rider_mass_kg, turn.pitch_rad),
-        turn.effective_edge_m, turn.max_load_g, turn.hardness_npm3, turn.shear_strength_pa,
-        turn.drag_angle_rad)
-    line_m = tightest_line_m(lean_rad, turn.speed_mps, turn.pitch_rad, pi - turn.from_phase_rad)
+    line_m, _widest_m = hold_lines_m(turn)
     if not isfinite(line_m):
         return None
-    bounded_by = "grip"
-    phases_deg = ridden_phases_deg(degrees(turn.from_phase_rad))
-    own_arc = table(replace(turn, line_radius_m=None), phases_deg)
-    for radius_m in own_arc["turn_radius_m"]:
-        if radius_m is not None and radius_m > line_m:
-            line_m, bounded_by = radius_m, "sidecut"
+    arc_m, bounded_by = widest_arc_m(turn), "grip"
+    if arc_m > line_m:
+        line_m, bounded_by = arc_m, "sidecut"
     if line_m <= 0:
         return None
-    rows = table(replace(turn, line_radius_m=line_m), phases_deg)
+    rows = table(replace(turn, line_radius_m=line_m),
+                 ridden_phases_deg(degrees(turn.from_phase_rad)))
     loaded = [index for index, margin in enumerate(rows["grip_margin"]) if margin is not None]
     if not loaded:
         return None
     worst = min(loaded, key=lambda index: rows["grip_margin"][index])
     return {"line_radius_m": line_m, "bounded_by": bounded_by, **{key: rows[key][worst] for key in (
-        "lean_deg", "edge_angle_deg", "load_g", "grip_margin", "limit", "phase_deg")}}
+        "lean_deg", "edge_angle_deg", "load_g", "grip_margin", "limit", "phase_deg",
+        "least_edge_angle_deg", "drift_angle_deg", "groove_width_m")},
+        "edge_catch_phases_deg": phases_under(rows, catch_rad)}
 
 
-def path_m(turn: Turn, rows: dict[str, list[Any]]) -> dict[str, list[float]]:
-    """The turn from above, m: x across the hill, y down the fall line in the plane of the snow.
+def phases_under(rows: dict[str, list[Any]], catch_rad: float) -> list[float]:
+    """Phases of a drifted turn at which the leading edge can catch.
 
-    One point a phase. Where no carve balances, the path is the board's own arc: flat where it is
-    too slow, at the edge angle of its fastest carve where it is too fast.
+    Those whose edge angle is under the clearance angle, and those whose edge is not loaded toward
+    the centre at all: there the board goes over flat. NaN: no tilt clears it.
     """
-    phases_rad = [radians(phase) for phase in rows["phase_deg"]]
-    radii_m = []
-    for phase_rad, at, radius_m in zip(phases_rad, rows["state"], rows["turn_radius_m"],
-                                       strict=True):
-        if turn.line_radius_m is not None:
-            radius_m = turn.line_radius_m
-        elif at == "too_fast":
-            _, edge_rad = fastest(turn.sidecut_radius_m, turn.pitch_rad, phase_rad,
-                                  turn.angulation_rad)
-            radius_m = turn.sidecut_radius_m * cos(edge_rad)
-        elif radius_m is None:
-            radius_m = turn.sidecut_radius_m
-        radii_m.append(radius_m)
-    x_m, y_m = [0.0], [0.0]
-    for i in range(1, len(radii_m)):
-        mean_m = (radii_m[i - 1] + radii_m[i]) / 2
-        x_m.append(x_m[-1] + mean_m * (sin(phases_rad[i]) - sin(phases_rad[i - 1])))
-        y_m.append(y_m[-1] + mean_m * (cos(phases_rad[i - 1]) - cos(phases_rad[i])))
-    return {"x_m": x_m, "y_m": y_m}
+    catch_deg = degrees(catch_rad)
+    return [phase for phase, edge_deg in zip(rows["phase_deg"], rows["edge_angle_deg"],
+                                             strict=True)
+            if edge_deg is None or not edge_deg > catch_deg]
 
 
 def cautions(pitch_deg: float) -> list[str]:
     """Codes of the warnings that belong beside an answer on this pitch."""
     return ["estimate"] + (["avalanche"] if pitch_deg >= AVALANCHE_PITCH_DEG else [])
-
-
-def _or_none(number: float) -> float | None:
-    return None if isnan(number) else float(number)
-
-
-def _deg_or_none(angle_rad: float) -> float | None:
-    return None if isnan(angle_rad) else degrees(angle_rad)
