@@ -1,0 +1,27 @@
+/** Rider and board: what changes less often than pitch, speed and snow. */
+
+import { createNumber } from '../controls/number.js';
+import { createSheet } from './sheet.js';
+
+/** Kind of quantity of each input, and where nudging starts where it may be empty. */
+const INPUTS = [
+  { key: 'rider_mass_kg', kind: 'mass' },
+  { key: 'angulation_deg', kind: 'angle' },
+  { key: 'max_load_g', kind: 'load' },
+  { key: 'effective_edge_m', kind: 'edge' },
+  { key: 'line_radius_m', kind: 'length', optional: true, start: 10 },
+  { key: 'drag_angle_deg', kind: 'angle', optional: true, start: 60 },
+];
+
+export function createRiderSheet(store) {
+  const numbers = INPUTS.map((input) => createNumber({ ...input, help: true, store }));
+  const sheet = createSheet('rider', ...numbers.map((number) => number.node));
+  return {
+    ...sheet,
+    update(state, errors) {
+      for (const number of numbers) number.update(state, errors);
+    },
+    /** Whether this sheet has the input of a field. */
+    has: (field) => INPUTS.some(({ key }) => key === field),
+  };
+}

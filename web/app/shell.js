@@ -1,0 +1,111 @@
+/** What is around every view: caution, settings, the way between views, ready for the hill. */
+
+import { el, setAttribute, setShown, setText, svg } from './dom.js';
+import { followLook } from './look.js';
+import { startOffline } from './offline.js';
+import { createCautionSheet } from './sheets/caution.js';
+import { createSettingsSheet } from './sheets/settings.js';
+import { formatNumber, language, t } from './text.js';
+import { createTurnView } from './views/turn.js';
+
+/** The views by name, in the order of the navigation. The contract of a view: views/turn.js. */
+const VIEWS = { turn: createTurnView };
+
+/** @param {{store: ReturnType<import('./store.js').createStore>, engine: any}} context */
+export function createShell(context) {
+  const { store } = context;
+  document.documentElement.lang = language;
+  followLook(store);
+  const caution = createCautionSheet();
+  const settings = createSettingsSheet(store);
+  const header = createHeader(caution, settings);
+  const main = document.querySelector('main');
+  const hosts = Object.fromEntries(Object.keys(VIEWS).map((name) =>
+    [name, el('section', { class: `view ${name}-view`, 'aria-label': t(`view.${name}`), hidden: true })]));
+  main.append(...Object.values(hosts));
+  const views = Object.fromEntries(Object.entries(VIEWS).map(([name, create]) => [name, create(hosts[name], context)]));
+  const nav = createNav(Object.keys(VIEWS), (view) => store.set({ view }));
+  document.querySelector('header').after(nav.node);
+  const hill = createHill(settings);
+  main.append(hill);
+
+  let current = null;
+  function update() {
+    const state = store.get();
+    const view = state.view in views ? state.view : 'turn';
+    if (view !== current) {
+      if (current) views[current].hide();
+      views[view].show();
+      nav.update(view);
+      current = view;
+    }
+    views[view].update(state);
+    header.update(state.answers[view]?.answer.cautions ?? []);
+    settings.update(state);
+  }
+  store.subscribe(update);
+  update();
+  return { update };
+}
+
+/** The caution, always in view; from a slope that can slide on, with the warning sign. */
+function createHeader(caution, settings) {
+  const text = el('span', { class: 'caution-text', text: t('caution.short') });
+  const warning = el('span', { class: 'caution-warning', hidden: true }, warningSign(), el('span', { text: t('caution.avalanche') }));
+  const node = document.querySelector('header');
+  node.append(
+    el('button', { type: 'button', class: 'caution', 'aria-haspopup': 'dialog', on: { click: caution.open } }, warning, text),
+    el('button', { type: 'button', class: 'settings', 'aria-haspopup': 'dialog', text: t('sheet.settings'), on: { click: settings.open } }));
+  return {
+    /** @param {string[]} codes the engine's cautions */
+    update(codes) {
+      const steep = codes.includes('avalanche');
+      setAttribute(node, 'data-warning', steep);
+      setShown(warning, steep);
+    },
+  };
+}
+
+/** General warning sign of ISO 3864 / ISO 7010 W001: black on yellow, in every look. */
+function warningSign() {
+  return svg('svg', { class: 'warning-sign', viewBox: '0 0 100 90', role: 'img', 'aria-label': t('caution.sign') },
+    svg('path', { class: 'border', d: 'M50 4 97 86H3Z' }), svg('path', { class: 'field', d: 'M50 19 84 78H16Z' }),
+    svg('path', { class: 'mark', d: 'M45 36h10l-2 24h-6Z' }), svg('circle', { class: 'mark', cx: 50, cy: 69, r: 5 }));
+}
+
+/** Buttons to the views; hidden while there is one view alone. */
+function createNav(names, onChoose) {
+  const buttons = names.map((name) => el('button', { type: 'button', class: 'nav-button', text: t(`view.${name}`), on: { click: () => onChoose(name) } }));
+  const node = el('nav', { class: 'nav', 'aria-label': t('view.nav'), hidden: names.length < 2 }, ...buttons);
+  return {
+    node,
+    update(current) {
+      names.forEach((name, i) => setAttribute(buttons[i], 'aria-current', name === current ? 'page' : null));
+    },
+  };
+}
+
+/** How far the app is on the phone. */
+function createHill(settings) {
+  const text = el('p', { class: 'hill-text', role: 'status' });
+  const bar = el('span', { class: 'hill-bar', hidden: true, 'aria-hidden': 'true' });
+  const say = (key, values) => {
+    setText(text, t(key, values));
+    settings.sayReady(t(key, values));
+  };
+  startOffline({
+    onProgress({ done, total }) {
+      const share = total ? done / total : 0;
+      // Screen readers hear of every tenth, the eye sees every step.
+      say('offline.fetching', { percent: `${formatNumber(Math.floor(share * 10) * 10)}\u202f%` });
+      setShown(bar, true);
+      bar.style.transform = `scaleX(${share.toFixed(3)})`;
+    },
+    onState(state) {
+      if (state !== 'fetching') setShown(bar, false);
+      if (state === 'fetching') say('offline.fetching', { percent: `0\u202f%` });
+      else say(`offline.${state}`);
+    },
+  });
+  return el('footer', { class: 'hill' }, bar, text);
+}

@@ -1,0 +1,107 @@
+/**
+ * Units that people read against those that the engine speaks (SI, degrees). Only this module
+ * converts; it knows no physics.
+ */
+
+import { formatNumber, t } from './text.js';
+
+/**
+ * @typedef {object} Unit
+ * @property {string} label key of the unit's symbol in the text table
+ * @property {(si: number) => number} show from the engine's unit to this one
+ * @property {(shown: number) => number} read back
+ * @property {number} decimals decimals of a shown result
+ * @property {number} step one nudge of an input
+ */
+
+const factor = (label, perSi, decimals, step) => ({
+  label, decimals, step, show: (si) => si * perSi, read: (shown) => shown / perSi,
+});
+
+const DEGREES = Math.PI / 180;
+
+/** @type {Record<string, Record<string, Unit>>} */
+const KINDS = {
+  speed: {
+    kmh: factor('unit.kmh', 3.6, 0, 1),
+    mph: factor('unit.mph', 3600 / 1609.344, 0, 1),
+    ms: factor('unit.ms', 1, 1, 0.5),
+  },
+  // The window's ends are worth a decimal: beyond them no carve balances.
+  speedWindow: {
+    kmh: factor('unit.kmh', 3.6, 1, 1),
+    mph: factor('unit.mph', 3600 / 1609.344, 1, 1),
+    ms: factor('unit.ms', 1, 1, 0.5),
+  },
+  pitch: {
+    deg: factor('unit.deg', 1, 0, 1),
+    percent: {
+      label: 'unit.percent', decimals: 0, step: 1,
+      show: (deg) => Math.tan(deg * DEGREES) * 100,
+      read: (percent) => Math.atan(percent / 100) / DEGREES,
+    },
+  },
+  angle: { deg: factor('unit.deg', 1, 0, 1) },
+  length: { m: factor('unit.m', 1, 1, 0.5), ft: factor('unit.ft', 1 / 0.3048, 0, 1) },
+  edge: { m: factor('unit.cm', 100, 0, 1), ft: factor('unit.in', 1 / 0.0254, 1, 0.5) },
+  depth: { m: factor('unit.mm', 1000, 1, 1), ft: factor('unit.in', 1 / 0.0254, 2, 0.05) },
+  mass: { m: factor('unit.kg', 1, 0, 1), ft: factor('unit.lb', 1 / 0.45359237, 0, 1) },
+  load: { g: factor('unit.g', 1, 2, 0.1) },
+  share: { percent: factor('unit.percent', 100, 0, 1) },
+};
+
+KINDS.bareSpeed = KINDS.speedWindow;
+/** Kinds whose unit stands beside them already. */
+const BARE = ['bareSpeed'];
+
+/** What the settings offer. */
+export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'], length: ['m', 'ft'] };
+
+/** @typedef {{speed: string, pitch: string, length: string}} Units */
+
+/** @type {Units} */
+export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm' };
+
+/** Kinds that follow the choice of another. */
+const FOLLOWS = { edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed' };
+
+/**
+ * The unit in which a kind of quantity is shown.
+ * @param {string} kind
+ * @param {Units} units
+ * @returns {Unit}
+ */
+export function unitOf(kind, units) {
+  const choice = units[FOLLOWS[kind] ?? kind];
+  return KINDS[kind][choice] ?? Object.values(KINDS[kind])[0];
+}
+
+/** The symbol after a number: no space before a degree sign, a narrow one before the others. */
+export function symbol(unit) {
+  return unit.label === 'unit.deg' ? t(unit.label) : `\u202f${t(unit.label)}`;
+}
+
+/**
+ * A result as text: number, then unit. A null is an en dash.
+ * @param {string} kind
+ * @param {number|null|undefined} value in the engine's unit
+ * @param {Units} units
+ * @param {{signed?: boolean}} [options]
+ */
+export function show(kind, value, units, { signed = false } = {}) {
+  if (value === null || value === undefined) return '–';
+  const unit = unitOf(kind, units);
+  const number = formatNumber(unit.show(value), { decimals: unit.decimals, signed });
+  return BARE.includes(kind) ? number : number + symbol(unit);
+}
+
+/**
+ * An input's value as it stands in its field: one decimal more than a result, where there is one.
+ * @param {string} kind
+ * @param {number} value
+ * @param {Units} units
+ */
+export function showEntry(kind, value, units) {
+  const unit = unitOf(kind, units);
+  return formatNumber(unit.show(value), { decimals: unit.decimals + 1, least: 0 });
+}

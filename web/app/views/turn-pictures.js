@@ -1,0 +1,107 @@
+/** The two pictures of a turn, and the scrubber that looks at any place in it. */
+
+import { el, setAttribute, setAttributes, setShown, setText } from '../dom.js';
+import { createAbove } from '../pictures/above.js';
+import { createSection } from '../pictures/section.js';
+import { t } from '../text.js';
+import { show } from '../units.js';
+import { caption, placeText, sectionLabel } from './turn-words.js';
+
+/** Labels in the pictures, in rem. */
+const LABEL_REM = 0.875;
+
+/** @param {{onPick: (index: number|null) => void}} given `onPick` null: back to the tightest point */
+export function createTurnPictures({ onPick }) {
+  const section = createSection();
+  const above = createAbove();
+  const scrub = el('div', {
+    class: 'scrub', role: 'slider', tabindex: '0', 'aria-label': t('picture.above.label'), 'aria-orientation': 'vertical',
+    on: { pointerdown: grabbed, pointermove: dragged, keydown: keyed },
+  }, above.node);
+  const chip = el('p', { class: 'chip', hidden: true });
+  const back = el('button', { type: 'button', class: 'back', hidden: true, text: t('picture.backToWorst'), on: { click: () => onPick(null) } });
+  const sectionBox = el('div', { class: 'section-box' }, section.node);
+  const captionText = el('p', { class: 'caption' });
+  const node = el('div', { class: 'pictures' }, sectionBox, scrub, el('div', { class: 'corner' }, chip, back), captionText);
+
+  let drawn = null;
+  const sizes = new Map();
+  new ResizeObserver((entries) => {
+    for (const { target, contentRect } of entries) sizes.set(target, contentRect);
+    draw();
+  }).observe(sectionBox);
+  // Both boxes change together; one observer call draws both.
+
+  function place(event) {
+    const box = above.node.getBoundingClientRect();
+    onPick(above.nearest(event.clientX - box.left, event.clientY - box.top));
+  }
+  function grabbed(event) {
+    if (!drawn || event.button !== 0) return;
+    scrub.setPointerCapture(event.pointerId);
+    place(event);
+  }
+  function dragged(event) {
+    if (drawn && scrub.hasPointerCapture(event.pointerId)) place(event);
+  }
+  function keyed(event) {
+    if (!drawn) return;
+    const last = drawn.shown.phases.length - 1;
+    const { index } = drawn.shown;
+    const target = {
+      ArrowRight: index + 1, ArrowDown: index + 1, ArrowLeft: index - 1, ArrowUp: index - 1,
+      PageDown: index + 3, PageUp: index - 3, Home: 0, End: last, Escape: null,
+    }[event.key];
+    if (target === undefined) return;
+    event.preventDefault();
+    onPick(target === null ? null : Math.max(0, Math.min(last, target)));
+  }
+
+  function draw() {
+    const root = getComputedStyle(document.documentElement);
+    const em = parseFloat(root.fontSize) * LABEL_REM;
+    const size = (box) => ({ width: box.clientWidth, height: box.clientHeight, em });
+    if (!drawn || !sectionBox.clientWidth) return;
+    const { shown, answer, question, units } = drawn;
+    section.update({
+      pitchDeg: question.pitch_deg, phaseDeg: shown.phaseDeg, leanDeg: shown.leanDeg,
+      edgeDeg: shown.edgeDeg, margin: shown.margin,
+      words: { lean: t('picture.lean'), edge: t('picture.edge'), force: t('picture.force'),
+        limit: shown.limit ? t(`limit.${shown.limit}`) : '', none: t('picture.noBalance') },
+    }, size(sectionBox));
+    const radius = answer.drift && show('length', answer.drift.line_radius_m, units);
+    above.update({
+      path: shown.path, states: shown.states, phases: shown.phases, index: shown.index,
+      other: shown.other, otherKind: shown.drifts ? 'own' : 'wider', markIndex: shown.failIndex,
+      words: {
+        fallLine: t('picture.fallLine'),
+        mark: shown.failIndex === null ? '' : t(`state.${shown.states[shown.failIndex]}`),
+        other: shown.drifts ? t('picture.ownArc') : t('picture.wider', { radius }),
+        line: shown.drifts ? radius : '',
+      },
+    }, size(scrub));
+  }
+
+  return {
+    node,
+    /** @param {string} text why what is shown is not the answer to what is set; empty: it is */
+    say(text) {
+      setShown(chip, Boolean(text));
+      setText(chip, text);
+      setAttribute(node, 'data-old', Boolean(text));
+    },
+    /** @param {{shown: any, answer: any, question: any, units: any}} next */
+    update(next) {
+      drawn = next;
+      const { shown, answer, units } = next;
+      draw();
+      setShown(back, shown.picked);
+      setText(captionText, caption(shown, answer, units));
+      setAttribute(section.node, 'aria-label', sectionLabel(shown, answer, units));
+      setAttributes(scrub, {
+        'aria-valuemin': shown.phases[0], 'aria-valuemax': shown.phases.at(-1),
+        'aria-valuenow': shown.phases[shown.index], 'aria-valuetext': placeText(shown, units),
+      });
+    },
+  };
+}
