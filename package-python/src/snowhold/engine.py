@@ -11,6 +11,7 @@ from snowhold.question import BadQuestion, Choice
 TOPICS = {
     "turn": "snowhold.turn",
     "window": "snowhold.window",
+    "reference": "snowhold.reference",
 }
 """What can be asked, and the module whose ``answer(question)`` answers it. Modules are imported
 when first asked for: the first verdict on a phone waits only for what it needs."""
