@@ -11,6 +11,7 @@ from snowhold.question import BadQuestion, Choice
 TOPICS = {
     "turn": "snowhold.turn",
     "window": "snowhold.window",
+    "pitch": "snowhold.pitch",
     "reference": "snowhold.reference",
 }
 """What can be asked, and the module whose ``answer(question)`` answers it. Modules are imported
