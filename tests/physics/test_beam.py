@@ -16,6 +16,7 @@ from scipy.integrate import solve_bvp
 from snowhold import beam
 from snowhold.beam import deflect, nodes_m, point_load, weights_m
 from snowhold.bend import (
+    NODES,
     Board,
     contact_parts,
     groove,
@@ -27,7 +28,7 @@ from snowhold.bend import (
 )
 
 
-def flat_board(nodes=101, edge_m=1.2, radius_m=8.0, stance_m=0.52, camber_m=0.0, setback_m=0.0,
+def flat_board(nodes=NODES, edge_m=1.2, radius_m=8.0, stance_m=0.52, camber_m=0.0, setback_m=0.0,
                front_share=0.5, shape=None):
     x_m = nodes_m(edge_m, nodes)
     shape = np.ones(nodes) if shape is None else np.interp(
@@ -93,8 +94,9 @@ def test_computed_figures_of_the_model(stiffness_nm2, radius_m):
 @pytest.mark.parametrize("edge_deg", [30, 45, 60])
 def test_halving_the_mesh_changes_little(stiffness_nm2, hardness, edge_deg):
     cuts = [pressed(flat_board(nodes), stiffness_nm2, 800, edge_deg, hardness)[1]
-            for nodes in (101, 201)]
+            for nodes in (NODES, 2 * NODES - 1)]
     assert cuts[0].curvature_pm == pytest.approx(cuts[1].curvature_pm, rel=1e-3)
+    assert cuts[0].contact_m == pytest.approx(cuts[1].contact_m, rel=1e-3)
 
 
 def winkler(stiffness_npm2):

@@ -81,14 +81,29 @@ def point_load(x_m: Array, at_m: float) -> Array:
     return share
 
 
-def curvature_matrix_pm2(x_m: Array) -> Array:
-    """Second differences D₂ at the inner nodes of an even mesh, 1/m², (nodes − 2) × nodes."""
-    rows = np.arange(x_m.size - 2)
-    matrix = np.zeros((x_m.size - 2, x_m.size))
-    matrix[rows, rows] = matrix[rows, rows + 2] = 1.0
-    matrix[rows, rows + 1] = -2.0
-    curvature: Array = matrix / (x_m[1] - x_m[0])**2
-    return curvature
+def _second_difference(u: Array) -> Array:
+    """D₂ u times the spacing squared, at the inner nodes."""
+    difference: Array = u[:, :-2] - 2 * u[:, 1:-1] + u[:, 2:]
+    return difference
+
+
+def _spread_back(moments: Array) -> Array:
+    """D₂ᵀ of values at the inner nodes, times the spacing squared."""
+    force = np.zeros((len(moments), moments.shape[1] + 2))
+    force[:, :-2] += moments
+    force[:, 1:-1] -= 2 * moments
+    force[:, 2:] += moments
+    return force
+
+
+def _bending_matrix(bend_npm: Array) -> Array:
+    """D₂ᵀ EI D₂ for EI over the spacing cubed at the inner nodes, N/m."""
+    rows = np.arange(bend_npm.shape[1])
+    matrix = np.zeros((len(bend_npm), rows.size + 2, rows.size + 2))
+    for i, left in enumerate((1.0, -2.0, 1.0)):
+        for j, right in enumerate((1.0, -2.0, 1.0)):
+            matrix[:, rows + i, rows + j] += left * right * bend_npm
+    return matrix
 
 
 def deflect(x_m: Array, stiffness_nm2: Array, free_shape_m: Array, load_n: Array, offset_m: Array,
@@ -109,11 +124,10 @@ def deflect(x_m: Array, stiffness_nm2: Array, free_shape_m: Array, load_n: Array
     Never raises on a hard case: ``converged`` says whether forces balance. ``balance`` compares
     the foundation's total push with the total load.
     """
-    bend = curvature_matrix_pm2(x_m)
     weights = weights_m(x_m)
-    moment_per_curvature = stiffness_nm2 * (x_m[1] - x_m[0])
-    stiffness: Array = np.matmul(bend.T * moment_per_curvature[:, None, :], bend)
-    free_curvature = bend @ free_shape_m
+    bend_npm = stiffness_nm2 / (x_m[1] - x_m[0])**3
+    stiffness = _bending_matrix(bend_npm)
+    free_bend = _second_difference(free_shape_m[None, :])
     total_n = np.abs(load_n).sum(axis=1)
     diagonal = np.arange(x_m.size)
     # So small that it changes no figure; it keeps the matrix regular should contact be lost.
@@ -121,8 +135,8 @@ def deflect(x_m: Array, stiffness_nm2: Array, free_shape_m: Array, load_n: Array
 
     def out_of_balance(u: Array) -> tuple[Array, Array]:
         push, slope = foundation(sink * u + offset_m)
-        moments = moment_per_curvature * (u @ bend.T - free_curvature)
-        return moments @ bend + weights * push - load_n, weights * slope * sink
+        bending_n = _spread_back(bend_npm * (_second_difference(u) - free_bend))
+        return bending_n + weights * push - load_n, weights * slope * sink
 
     def relative(force_n: Array) -> Array:
         # Bending moments add up to no force, so the sum is push less load.
