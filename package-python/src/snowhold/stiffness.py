@@ -42,7 +42,7 @@ LOAD_SPREAD_SHARE = 0.02
 """1σ of a load where it is not given, over the load. Assumed."""
 
 STIFFNESSES_NM2 = (20.0, 2000.0)
-"""Stiffnesses that a board question may hold, N·m²."""
+"""Stiffnesses that a board question may hold, N·m²: children's boards to racing ones. Assumed."""
 
 
 def bending_stiffness_nm2(load_n: float, supports_m: float, sag_m: float) -> float:

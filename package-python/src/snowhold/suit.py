@@ -15,6 +15,8 @@ import numpy as np
 
 from snowhold.beam import Array
 from snowhold.bend import Board, groove, press, sidecut_curvature_pm
+from snowhold.stiffness import STIFFNESSES_NM2
+from snowhold.turn import RANGES
 
 SUITS_SHARE = 0.10
 """Departure from R_sc cos ε, either way, up to which a board is said to suit. Assumed."""
@@ -22,11 +24,8 @@ SUITS_SHARE = 0.10
 SEARCH_NODES = 41
 """Nodes of the search. Assumed; its bounds differ from those of a fine mesh by about 1 %."""
 
-MASSES_KG = (15.0, 200.0)
+MASSES_KG = RANGES["rider_mass_kg"]
 """Rider masses searched, those that a question may hold."""
-
-STIFFNESSES_NM2 = (20.0, 2000.0)
-"""Stiffnesses searched, those that a question may hold."""
 
 Range = dict[str, float | None]
 """``min`` and ``max``; None at an end: it lies outside what was searched."""
