@@ -13,6 +13,9 @@ TOPICS = {
     "window": "snowhold.window",
     "pitch": "snowhold.pitch",
     "reference": "snowhold.reference",
+    "board": "snowhold.board",
+    "boards": "snowhold.compare",
+    "stiffness": "snowhold.stiffness",
 }
 """What can be asked, and the module whose ``answer(question)`` answers it. Modules are imported
 when first asked for: the first verdict on a phone waits only for what it needs."""
