@@ -56,6 +56,11 @@ class Host:
     def url(self) -> str:
         return f"http://localhost:{self._port}/"
 
+    @property
+    def sent(self) -> int:
+        """Bytes sent since the host came up."""
+        return int(self._server.sent)
+
     def start(self, folder: Path | None = None) -> None:
         """Come up, with another folder if one is given."""
         self.folder = folder or self.folder
