@@ -18,7 +18,7 @@ export function valueAt(answer, key) {
  * @param {{signed?: boolean, class?: string}} [options]
  */
 export function createFigure(kind, { signed = false, class: name = 'figure' } = {}) {
-  const node = el('span', { class: name });
+  const node = el('span', { class: name, text: '–' });
   return {
     node,
     /**

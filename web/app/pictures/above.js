@@ -41,8 +41,8 @@ export function createAbove() {
     fallLine: part('fall-line'), fallHead: part('fall-head'), mark: part('mark'), cut: part('cut'),
   };
   const board = { rim: part('board rim'), deck: part('board') };
-  const label = (name) => svg('text', { class: `label ${name}` });
-  const labels = { fallLine: label('small'), mark: label(''), other: label('small'), line: label('') };
+  const label = (name, ...lines) => svg('text', { class: `label ${name}` }, ...lines);
+  const labels = { fallLine: label('small'), mark: label('', svg('tspan'), svg('tspan')), other: label('small'), line: label('') };
   const node = svg('svg', { class: 'above', focusable: 'false', 'aria-hidden': 'true' },
     ...Object.values(parts), ...Object.values(board), ...Object.values(labels));
   /** @type {import('./geometry.js').Point[]} the path that is drawn as the ride, on the screen */
@@ -101,15 +101,44 @@ export function createAbove() {
     const marked = markIndex === null ? null : ridden[markIndex];
     setAttribute(parts.mark, 'd', marked &&
       line(moved(marked, [inward(markIndex), -9]), moved(marked, [inward(markIndex), 9])));
-    put(labels.mark, marked && words.mark, marked && inside(ridden, markIndex, words.mark, em * 1.7));
-    const low = Math.floor(ridden.length * 0.68);
-    put(labels.line, words.line, inside(ridden, low, words.line, em * 1.1));
-    // The board's own arc is the smaller one: named under its end. A wider line: low on its inside.
+    const glyph = [here, moved(here, [inward(index), 30]), moved(here, [heading, -12]), moved(here, [heading, 12])];
+    const markAt = marked && putMark(words.mark);
+    setShown(labels.mark, Boolean(marked));
+
+    /** What goes at the mark, in two lines where the picture is narrow; gives the text's middle. */
+    function putMark(text) {
+      const lines = width < em * 13 ? text.split(' ') : [text];
+      const longest = lines.reduce((long, one) => (one.length > long.length ? one : long));
+      const wide = longest.length * em * 0.5;
+      const last = ridden.length - 1;
+      const near = [0, -3, -6, -9, -12, -16, 4].map((step) => Math.max(0, Math.min(last, markIndex + step)));
+      const [x, y] = clear(near.map((i) => inside(ridden, i, longest, em * 1.5)), wide / 2,
+        em * (0.8 + lines.length * 0.5), glyph);
+      const left = Math.max(frame.left, Math.min(width - 4 - wide, x));
+      const top = Math.max(em, y + em * 0.35 - (lines.length - 1) * em * 0.5);
+      [...labels.mark.children].forEach((tspan, i) => {
+        setText(tspan, lines[i] ?? '');
+        setAttributes(tspan, { x: left.toFixed(1), y: (top + i * em * 1.05).toFixed(1) });
+      });
+      return [left + wide / 2, y];
+    }
+
+    // Names of the lines: where the board, the mark and the other line leave room.
+    const taken = marked ? [...glyph, marked, markAt] : glyph;
+    const named = (points, text, avoid) => {
+      const spots = [0.8, 0.93, 0.66, 0.5, 0.28, 0.15].map((share) =>
+        inside(points, Math.round((points.length - 1) * share), text, em * 1.1));
+      return clear(spots, (text.length * em) / 4, em * 1.3, avoid);
+    };
+    put(labels.line, words.line, words.line && named(ridden, words.line, [...taken, ...(otherPoints ?? [])]));
+    // The board's own arc is the smaller one: named under its end.
     put(labels.other, otherPoints && words.other, otherPoints && (shown.otherKind === 'own'
-      ? moved(otherPoints.at(-1), [[0, 1], em * 0.9]) : inside(otherPoints, low, words.other, em * 0.8)));
+      ? moved(otherPoints.at(-1), [[0, 1], em * 0.9]) : named(otherPoints, words.other, [...taken, ...ridden])));
   }
 
   function drawFallLine(em, middle, half, text) {
+    for (const one of [parts.fallLine, parts.fallHead, labels.fallLine]) setShown(one, Boolean(text));
+    if (!text) return;
     const x = em * 0.75;
     const tip = [x, middle + half + em * 1.6];
     setAttribute(parts.fallLine, 'd', line([x, middle + half + 4], [x, tip[1] - 8]) +
@@ -133,6 +162,17 @@ export function createAbove() {
   }
 
   return { node, update, nearest };
+}
+
+/**
+ * The first spot whose text leaves `need` px to all that is to be avoided; else the one that leaves
+ * most. `half`: half the text's width.
+ */
+function clear(spots, half, need, avoid) {
+  const room = ([x, y]) => Math.min(...avoid.map(([ax, ay]) =>
+    Math.hypot(Math.max(0, Math.abs(x + half - ax) - half), y - ay)));
+  return spots.find((spot) => room(spot) >= need) ??
+    spots.reduce((best, spot) => (room(spot) > room(best) ? spot : best));
 }
 
 /** How to place paths in metres into a frame: one scale for both ways, all of them inside. */

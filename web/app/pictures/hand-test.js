@@ -5,7 +5,7 @@ import { svg } from '../dom.js';
 const SURFACE = 27;
 const bar = (x, wide, to) => {
   const r = wide / 2;
-  return `M${x - r} 4V${to - r}a${r} ${r} 0 0 0 ${wide} 0V4Z`;
+  return `M${x + r} 4V${to - r}a${r} ${r} 0 0 1 ${-wide} 0V4Z`;
 };
 const KNIFE = (to) => `M23.5 0h9v${to - 20}h-9ZM25 ${to - 20}h6v12q0 4-6 8Z`;
 

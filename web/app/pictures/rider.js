@@ -13,20 +13,20 @@ const POSE = {
   heel: { up: 0.055, toe: -0.075 },
   toe: { up: 0.05, toe: 0.075 },
   ankle: { up: 0.1, toe: -0.03 },
-  knee: { up: 0.28, toe: 0.055 },
-  hip: { up: 0.47, toe: -0.04 },
+  knee: { up: 0.285, toe: 0.045 },
+  hip: { up: 0.485, toe: 0.012 },
 };
 const TRUNK = {
-  waist: { up: 0.56, toe: -0.02 },
-  chest: { up: 0.735, toe: 0.012 },
-  neck: { up: 0.83, toe: 0.025 },
-  head: { up: 0.915, toe: 0.04 },
-  brow: { up: 0.93, toe: 0.1 },
-  cheek: { up: 0.9, toe: 0.1 },
-  elbow: { up: 0.6, toe: 0.1 },
-  hand: { up: 0.485, toe: 0.175 },
-  farElbow: { up: 0.65, toe: 0.15 },
-  farHand: { up: 0.58, toe: 0.265 },
+  waist: { up: 0.575, toe: 0.012 },
+  chest: { up: 0.74, toe: -0.012 },
+  neck: { up: 0.835, toe: -0.008 },
+  head: { up: 0.918, toe: 0.006 },
+  brow: { up: 0.932, toe: 0.066 },
+  cheek: { up: 0.902, toe: 0.066 },
+  elbow: { up: 0.605, toe: 0.055 },
+  hand: { up: 0.49, toe: 0.135 },
+  farElbow: { up: 0.65, toe: 0.1 },
+  farHand: { up: 0.57, toe: 0.2 },
 };
 const BALANCE = { up: 0.56, toe: 0 };
 /** Width of the board; a little more than true, so that its tilt can be seen. */
@@ -54,8 +54,8 @@ export function riderShape({ edge, along, square, bendDeg, height }) {
 
   const ankle = place(POSE.ankle);
   const heel = place(POSE.heel);
-  const knee = legs(POSE.knee, 0.4);
-  const hip = legs(POSE.hip, 0.85);
+  const knee = legs(POSE.knee, 0.5);
+  const hip = legs(POSE.hip, 0.9);
   const chest = trunk('chest');
   const farKnee = moved(knee, [toeward, 0.035 * height], [square, 0.012 * height]);
   const r = (share) => share * height;

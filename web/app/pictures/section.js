@@ -74,14 +74,18 @@ export function createSection() {
     const lean = leanDeg ?? tiltDeg;
     const edge = edgeDeg ?? 0;
 
-    /** Writes `text` so that it ends (`side` -1) or starts (1) at a point, kept inside the picture. */
-    const put = (one, text, [x, y], side) => {
+    /**
+     * Writes `text` so that it ends (`side` -1) or starts (1) at a point, kept inside the picture.
+     * Gives where it ends.
+     */
+    const put = (one, text, [x, y], side, notBefore = -Infinity) => {
       const wide = text.length * em * 0.52;
-      const from = side < 0 ? x - wide : x;
+      const from = Math.max(side < 0 ? x - wide : x, notBefore);
       const inside = Math.max(box.left, Math.min(box.right - wide, from));
       setText(one, text);
       setAttributes(one, { x: inside.toFixed(1),
         y: Math.max(box.top + em * 0.8, Math.min(box.bottom - 2, y + em * 0.35)).toFixed(1) });
+      return inside + wide;
     };
     drawSnow(foot, upward(90 - tiltDeg), width + height);
     const axis = upward(onPage(lean));
@@ -123,9 +127,12 @@ export function createSection() {
 
     put(labels.lean, words.lean, moved(foot, [perpendicular, leanRadius], [[-1, 0], em * 0.5]), -1);
     put(labels.edge, words.edge, moved(foot, [upward(onPage(edge / 2 - 90)), edgeRadius + em * 0.4]), -1);
-    const outer = margin < 0 ? -1 : 1;
-    put(labels.limit, words.limit, moved(foot, [limit, reach * 0.8], [[-outer, 0], em * 0.7]), -outer);
-    put(labels.force, words.force, moved(foot, [force, reach * 0.8], [[outer, 0], em * 0.9]), outer);
+    // The line that lies further out is named on its outer side, the other one inside.
+    const names = [[labels.limit, words.limit, limit], [labels.force, words.force, force]];
+    if (margin < 0) names.reverse();
+    const [[outer, outerText, outerRay], [inner, innerText, innerRay]] = names;
+    const end = put(outer, outerText, moved(foot, [outerRay, reach * 0.8], [[-1, 0], em * 0.7]), -1);
+    put(inner, innerText, moved(foot, [innerRay, reach * 0.8], [[1, 0], em * 0.8]), 1, end + em * 0.4);
   }
 
   function drawSnow(foot, toward, wide) {

@@ -39,7 +39,7 @@ export function createFiguresSheet() {
   const driftWhy = el('p', { class: 'aside' });
   const driftList = el('dl', { class: 'rows' }, ...drift.map((row) => row.node));
   const along = el('ul', { class: 'along' });
-  const sheet = createSheet('figures',
+  const sheet = createSheet('figures', null,
     el('h3', { text: t('figure.window') }), windowRow, noWindow,
     el('h3', { text: t('figure.worst') }), worstWhere, el('dl', { class: 'rows' }, ...worst.map((row) => row.node)),
     el('h3', { text: t('figure.drift') }), driftWhy, driftList,

@@ -13,9 +13,13 @@ const INPUTS = [
   { key: 'drag_angle_deg', kind: 'angle', optional: true, start: 60 },
 ];
 
-export function createRiderSheet(store) {
+/**
+ * @param {ReturnType<import('../store.js').createStore>} store
+ * @param {Node} echo the verdict, beside the sheet's name
+ */
+export function createRiderSheet(store, echo) {
   const numbers = INPUTS.map((input) => createNumber({ ...input, help: true, store }));
-  const sheet = createSheet('rider', ...numbers.map((number) => number.node));
+  const sheet = createSheet('rider', echo, ...numbers.map((number) => number.node));
   return {
     ...sheet,
     update(state, errors) {

@@ -21,7 +21,7 @@ export function createSettingsSheet(store) {
     onChoose: (value) => store.set({ look: value }, { undo: 'settings' }),
   });
   const hill = el('p', { class: 'aside' });
-  const sheet = createSheet('settings', ...units.map(({ choice }) => choice.node), look.node, hill);
+  const sheet = createSheet('settings', null, ...units.map(({ choice }) => choice.node), look.node, hill);
   return {
     ...sheet,
     update(state) {

@@ -8,16 +8,17 @@ import { t } from '../text.js';
 
 /**
  * @param {string} name
+ * @param {Node|null} aside stands beside the sheet's name
  * @param {...Node} content
  */
-export function createSheet(name, ...content) {
+export function createSheet(name, aside, ...content) {
   const title = el('h2', { id: `sheet-${name}-title`, text: t(`sheet.${name}`), tabindex: '-1', autofocus: true });
   const body = el('div', { class: 'sheet-body' }, ...content);
   const dialog = el('dialog', {
     class: 'sheet', id: `sheet-${name}`, 'aria-labelledby': title.id,
     // A press on the dimmed page behind the sheet closes it.
     on: { click: (event) => { if (event.target === dialog) dialog.close(); } },
-  }, el('div', { class: 'sheet-frame' }, title, body,
+  }, el('div', { class: 'sheet-frame' }, el('div', { class: 'sheet-head' }, title, aside), body,
     el('button', { type: 'button', class: 'sheet-close', text: t('sheet.close'), on: { click: () => dialog.close() } })));
   document.body.append(dialog);
   return {

@@ -9,16 +9,20 @@ import { createSheet } from './sheet.js';
 /** The classes, softest first. */
 export const SNOWS = ['F', '4F', '1F', 'P', 'K', 'I'];
 
-export function createSnowSheet(store) {
+/**
+ * @param {ReturnType<import('../store.js').createStore>} store
+ * @param {Node} echo the verdict, beside the sheet's name
+ */
+export function createSnowSheet(store, echo) {
   const choice = createChoice({
     name: 'snow', legend: t('sheet.snow'), legendHidden: true, question: 'snow',
     options: SNOWS.map((code) => ({
-      value: code, label: t(`snow.${code}`), detail: `${t(`snow.${code}.how`)}: ${t(`snow.${code}.piste`)}`,
+      value: code, label: t(`snow.${code}.title`), detail: t(`snow.${code}.how`),
       picture: drawHandTest(code),
     })),
     onChoose: (code) => store.set({ inputs: { snow: code } }, { undo: 'snow' }),
   });
-  const sheet = createSheet('snow', el('p', { text: t('snow.intro') }), choice.node,
+  const sheet = createSheet('snow', echo, el('p', { text: t('snow.intro') }), choice.node,
     el('p', { class: 'aside', text: t('snow.source') }));
   return { ...sheet, update: (state) => choice.update(state.inputs.snow) };
 }

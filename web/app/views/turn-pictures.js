@@ -7,9 +7,6 @@ import { t } from '../text.js';
 import { show } from '../units.js';
 import { caption, placeText, sectionLabel } from './turn-words.js';
 
-/** Labels in the pictures, in rem. */
-const LABEL_REM = 0.875;
-
 /** @param {{onPick: (index: number|null) => void}} given `onPick` null: back to the tightest point */
 export function createTurnPictures({ onPick }) {
   const section = createSection();
@@ -18,19 +15,26 @@ export function createTurnPictures({ onPick }) {
     class: 'scrub', role: 'slider', tabindex: '0', 'aria-label': t('picture.above.label'), 'aria-orientation': 'vertical',
     on: { pointerdown: grabbed, pointermove: dragged, keydown: keyed },
   }, above.node);
-  const chip = el('p', { class: 'chip', hidden: true });
-  const back = el('button', { type: 'button', class: 'back', hidden: true, text: t('picture.backToWorst'), on: { click: () => onPick(null) } });
-  const sectionBox = el('div', { class: 'section-box' }, section.node);
+  const back = el('button', { type: 'button', class: 'back', hidden: true, text: t('picture.back'), 'aria-label': t('picture.backLabel'), on: { click: () => onPick(null) } });
+  const sectionBox = el('div', { class: 'section-box' }, section.node, back);
   const captionText = el('p', { class: 'caption' });
-  const node = el('div', { class: 'pictures' }, sectionBox, scrub, el('div', { class: 'corner' }, chip, back), captionText);
+  const node = el('div', { class: 'pictures' }, sectionBox, scrub, captionText);
 
   let drawn = null;
-  const sizes = new Map();
-  new ResizeObserver((entries) => {
-    for (const { target, contentRect } of entries) sizes.set(target, contentRect);
+  let bare = null;
+  /** Sizes of the boxes and of the labels' type, px; measured only when they change. */
+  const size = {};
+  const measure = (box) => ({
+    width: box.clientWidth, height: box.clientHeight,
+    em: parseFloat(getComputedStyle(box.querySelector('.label')).fontSize),
+  });
+  const observer = new ResizeObserver(() => {
+    size.section = measure(sectionBox);
+    size.above = measure(scrub);
     draw();
-  }).observe(sectionBox);
-  // Both boxes change together; one observer call draws both.
+  });
+  observer.observe(sectionBox);
+  observer.observe(scrub);
 
   function place(event) {
     const box = above.node.getBoundingClientRect();
@@ -58,45 +62,46 @@ export function createTurnPictures({ onPick }) {
   }
 
   function draw() {
-    const root = getComputedStyle(document.documentElement);
-    const em = parseFloat(root.fontSize) * LABEL_REM;
-    const size = (box) => ({ width: box.clientWidth, height: box.clientHeight, em });
-    if (!drawn || !sectionBox.clientWidth) return;
+    if (!size.section?.width) return;
+    if (!drawn && bare) section.update(bare, size.section);
+    if (!drawn) return;
     const { shown, answer, question, units } = drawn;
     section.update({
       pitchDeg: question.pitch_deg, phaseDeg: shown.phaseDeg, leanDeg: shown.leanDeg,
       edgeDeg: shown.edgeDeg, margin: shown.margin,
       words: { lean: t('picture.lean'), edge: t('picture.edge'), force: t('picture.force'),
         limit: shown.limit ? t(`limit.${shown.limit}`) : '', none: t('picture.noBalance') },
-    }, size(sectionBox));
+    }, size.section);
     const radius = answer.drift && show('length', answer.drift.line_radius_m, units);
     above.update({
       path: shown.path, states: shown.states, phases: shown.phases, index: shown.index,
       other: shown.other, otherKind: shown.drifts ? 'own' : 'wider', markIndex: shown.failIndex,
       words: {
-        fallLine: t('picture.fallLine'),
+        fallLine: question.pitch_deg > 0 ? t('picture.fallLine') : '',
         mark: shown.failIndex === null ? '' : t(`state.${shown.states[shown.failIndex]}`),
         other: shown.drifts ? t('picture.ownArc') : t('picture.wider', { radius }),
         line: shown.drifts ? radius : '',
       },
-    }, size(scrub));
+    }, size.above);
   }
 
   return {
     node,
-    /** @param {string} text why what is shown is not the answer to what is set; empty: it is */
-    say(text) {
-      setShown(chip, Boolean(text));
-      setText(chip, text);
-      setAttribute(node, 'data-old', Boolean(text));
+    /** The hill alone, while there is no answer. */
+    preview(pitchDeg) {
+      if (drawn) return;
+      bare = { pitchDeg, phaseDeg: 180, leanDeg: null, edgeDeg: null, margin: null, words: { none: '' } };
+      draw();
     },
-    /** @param {{shown: any, answer: any, question: any, units: any}} next */
+    /** @param {{shown: any, answer: any, question: any, units: any, old: string}} next `old`: why this
+     *   is not the answer to what is set; empty: it is */
     update(next) {
       drawn = next;
-      const { shown, answer, units } = next;
+      const { shown, answer, units, old } = next;
       draw();
+      setAttribute(node, 'data-old', Boolean(old));
       setShown(back, shown.picked);
-      setText(captionText, caption(shown, answer, units));
+      setText(captionText, old || caption(shown, answer, units));
       setAttribute(section.node, 'aria-label', sectionLabel(shown, answer, units));
       setAttributes(scrub, {
         'aria-valuemin': shown.phases[0], 'aria-valuemax': shown.phases.at(-1),

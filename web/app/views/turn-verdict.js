@@ -3,6 +3,7 @@
 import { el, setAttribute, setShown, setText } from '../dom.js';
 import { createFigure } from '../figure.js';
 import { t } from '../text.js';
+import { show } from '../units.js';
 import { fix, why } from './turn-words.js';
 
 /** A verdict that stands this long is read out, ms. */
@@ -28,6 +29,7 @@ export function createVerdict() {
   const remedy = el('strong', { class: 'fix' }, before, figures.length.node, figures.speedWindow.node, after);
   const live = el('p', { class: 'visually-hidden', 'aria-live': 'polite' });
   const node = el('div', { class: 'verdict' }, word, stroke, el('p', { class: 'says' }, reason, ' ', remedy), live);
+  const echoes = [];
   let timer = 0;
 
   function setWord(text) {
@@ -36,10 +38,14 @@ export function createVerdict() {
     word.style.setProperty('--ems', emsWide(text).toFixed(2));
   }
 
+  function announce(text) {
+    for (const one of [live, ...echoes.map((echo) => echo.live)]) setText(one, text);
+  }
+
   function announceSoon() {
     const text = `${word.textContent}. ${reason.textContent} ${remedy.textContent}`.trim();
     clearTimeout(timer);
-    if (live.textContent !== text) timer = setTimeout(setText, SETTLED_MS, live, text);
+    if (live.textContent !== text) timer = setTimeout(announce, SETTLED_MS, text);
   }
 
   return {
@@ -47,6 +53,7 @@ export function createVerdict() {
     /** Says how things stand while there is no answer at all; empty: there is one. */
     say(text) {
       if (!text) return;
+      for (const figure of Object.values(figures)) setShown(figure.node, false);
       setWord(t('verdict.none'));
       setText(reason, text);
       setAttribute(node, 'data-verdict', 'none');
@@ -70,7 +77,18 @@ export function createVerdict() {
         if (name === kind) figure.update(answer, key, units);
         else setAttribute(figure.node, 'data-answer', null);
       }
+      const margin = show('share', answer.worst.grip_margin, units, { signed: true });
+      for (const echo of echoes) {
+        setText(echo.seen, answer.worst.grip_margin === null ? word.textContent
+          : t('verdict.echo', { verdict: word.textContent, margin }));
+      }
       if (!old) announceSoon();
+    },
+    /** The verdict in short for a sheet that covers it; read out there when settled, too. */
+    echo() {
+      const echo = { seen: el('span', { 'aria-hidden': 'true' }), live: el('span', { class: 'visually-hidden', 'aria-live': 'polite' }) };
+      echoes.push(echo);
+      return el('p', { class: 'echo' }, echo.seen, echo.live);
     },
   };
 }

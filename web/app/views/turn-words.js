@@ -2,6 +2,7 @@
 
 import { t } from '../text.js';
 import { show } from '../units.js';
+import { zoneOf } from './turn-shown.js';
 
 /** The verdict's reason, one sentence. */
 export function why({ reason: { state, limit, zone } }) {
@@ -30,6 +31,7 @@ export function caption(shown, answer, units) {
   if (shown.drifts) {
     return t('picture.atDrift', { phase, radius: show('length', answer.drift.line_radius_m, units) });
   }
+  if (shown.leanDeg === null) return t('picture.at', { phase, zone: t(`zone.${zoneOf(shown.phaseDeg)}`) });
   return t(shown.zone === 'whole' ? 'picture.atWhole' : 'picture.atWorst', { phase, zone: t(`zone.${shown.zone}`) });
 }
 

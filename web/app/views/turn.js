@@ -39,13 +39,13 @@ const FIGURES = [
  */
 export function createTurnView(host, { store, engine }) {
   const verdict = createVerdict();
-  const figures = FIGURES.map(([name, kind, key, options]) => ({ key, figure: createFigure(kind, options), name }));
+  const figures = FIGURES.map(([name, kind, key, options]) => ({ key, name, figure: createFigure(kind, options), label: el('dt', { text: t(`figure.${name}`) }) }));
   const pictures = createTurnPictures({ onPick: (index) => { picked = index; render(); } });
   const speedWindow = createWindow();
   const numbers = SLIDERS.map((input) => createNumber({
     ...input, aside: input.key === 'speed_mps' ? speedWindow.node : undefined, store }));
-  const snowSheet = createSnowSheet(store);
-  const riderSheet = createRiderSheet(store);
+  const snowSheet = createSnowSheet(store, verdict.echo());
+  const riderSheet = createRiderSheet(store, verdict.echo());
   const figuresSheet = createFiguresSheet();
   const snow = dockButton('sheet.snow', snowSheet.open);
   const rider = dockButton('dock.rider', riderSheet.open);
@@ -55,8 +55,8 @@ export function createTurnView(host, { store, engine }) {
 
   host.append(
     el('div', { class: 'look' }, verdict.node,
-      el('dl', { class: 'figures' }, ...figures.map(({ name, figure }) =>
-        el('div', {}, el('dt', { text: t(`figure.${name}`) }), el('dd', {}, figure.node)))),
+      el('dl', { class: 'figures' }, ...figures.map(({ label, figure }) =>
+        el('div', {}, label, el('dd', {}, figure.node)))),
       pictures.node),
     el('div', { class: 'set' }, ...numbers.map((number) => number.node),
       el('div', { class: 'dock' }, snow.node, rider.node, more.node, undo.node)));
@@ -108,6 +108,7 @@ export function createTurnView(host, { store, engine }) {
     }
     snowSheet.update(state);
     riderSheet.update(state, errors);
+    setText(snow.label, t('dock.snow', { snow: t(`snow.${inputs.snow}.short`) }));
     setText(snow.value, t(`snow.${inputs.snow}`));
     setText(rider.value, typeof inputs.rider_mass_kg === 'number' ? showQuantity('mass', inputs.rider_mass_kg, units) : '!');
     setAttribute(rider.node, 'data-wrong', errors.some(({ field }) => riderSheet.has(field)));
@@ -118,13 +119,18 @@ export function createTurnView(host, { store, engine }) {
 
     const old = engine.state !== 'ready' ? `engine.${engine.state}` : errors.length ? 'engine.stale' : '';
     verdict.say(kept ? '' : t(old || 'engine.starting'));
-    pictures.say(kept && old ? t(`${old}.last`) : '');
-    if (!kept) return;
+    if (!kept) {
+      pictures.preview(typeof inputs.pitch_deg === 'number' ? inputs.pitch_deg : 0);
+      return;
+    }
     const { question, answer, wider } = kept;
     const shown = shownTurn(answer, wider, picked);
     verdict.update(answer, units, Boolean(old));
-    for (const { figure, key } of figures) figure.update(shown.source, shown.key(key), units);
-    pictures.update({ shown, answer, question, units });
+    for (const { figure, key, name, label } of figures) {
+      figure.update(shown.source, shown.key(key), units);
+      setText(label, shown.picked ? t(`figure.${name}.at`, { phase: showQuantity('angle', shown.phaseDeg, units) }) : t(`figure.${name}`));
+    }
+    pictures.update({ shown, answer, question, units, old: old && t(`${old}.last`) });
     speedWindow.update(answer, units);
     figuresSheet.update(answer, units);
   }
@@ -160,8 +166,11 @@ function undoName(what) {
 
 /** A button under the controls: what it is about, and what is set. */
 function dockButton(label, onClick) {
+  const name = el('span', { class: 'dock-label', text: t(label) });
   const value = el('span', { class: 'dock-value' });
-  const node = el('button', { type: 'button', class: 'dock-button', on: { click: onClick } },
-    el('span', { class: 'dock-label', text: t(label) }), value);
-  return { node, value };
+  return {
+    node: el('button', { type: 'button', class: 'dock-button', on: { click: onClick } }, name, ' ', value),
+    label: name,
+    value,
+  };
 }
