@@ -171,6 +171,14 @@ def test_band_is_widened_by_a_friction_outside_it():
     assert stopping["reaction_time_s"] == {"low": 0.5, "mid": 2, "high": 2}
 
 
+def test_band_takes_in_mass_and_drag_area():
+    """0.35 to 0.7 m² and 60 to 100 kg around 0.5 m² and 80 kg: assumed."""
+    reply = ask()
+    density = reply["air_density_kgpm3"]
+    assert reply["band"]["drag_per_m"]["low"] == pytest.approx(density * 0.35 / (2 * 100))
+    assert reply["band"]["drag_per_m"]["high"] == pytest.approx(density * 0.7 / (2 * 60))
+
+
 def test_sweep_is_what_asking_gives():
     """The sweep changes the pitch of the leg of the fall and nothing else."""
     fields = {"speed_mps": 8, "fall_at_m": 140}
@@ -290,6 +298,12 @@ def test_slides_back_is_said():
                 clothing_friction=0.2)
     assert reply["slide"]["slides_back"] and reply["band"]["may_slide_back"]
     assert "slide back" in english(reply["sentences"][1])
+    # Every slide of the band halts on the rise, and only those in rough clothing lie there.
+    reply = ask([{"pitch_deg": 0, "length_m": 5}, {"pitch_deg": -15, "length_m": 300}],
+                speed_mps=15)
+    assert reply["levels"][0]["slides_back"] and not reply["levels"][2]["slides_back"]
+    assert reply["band"]["may_slide_back"]
+    assert not one(-8, speed_mps=15)["band"]["may_slide_back"]
 
 
 @pytest.mark.parametrize(("legs", "fields"), [

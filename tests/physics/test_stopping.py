@@ -97,6 +97,15 @@ def test_faster_later_or_weaker_never_stops_sooner(legs, v1, v2, grip1, grip2, t
     assert best <= worst * (1 + 1e-9) + 1e-9
 
 
+def test_a_longer_reaction_never_stops_sooner_on_too_steep_a_leg():
+    """Energy by hand: down 30 m at 40°, with no braking that holds, then 0.35 g on the level."""
+    legs = legs_of([(40, 30), (0, 500)])
+    gained = G * (math.sin(math.radians(40)) - 0.35 * math.cos(math.radians(40))) * 30
+    level_m = (5**2 / 2 + gained) / (0.35 * G)
+    for reaction_s in (0.0, 2.0, 6.0):
+        assert stopping_distance_on_m(legs, 5.0, 0.35, reaction_s) == pytest.approx(30 + level_m)
+
+
 @given(st.floats(-20, 50), st.floats(0.5, 5000), GRIPS, REACTIONS)
 def test_speed_within_sight_stops_within_sight(pitch_deg, sight_m, grip, reaction_s):
     """The closed form is the inverse of the distance, and the search over a profile finds it."""
