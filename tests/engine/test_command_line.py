@@ -50,6 +50,20 @@ def test_words_for_people(capsys, monkeypatch, fields, words):
         assert word in out
 
 
+@pytest.mark.parametrize("question", [
+    {"ask": "window", "pitch_deg": 15, "speed_mps": 6, "sidecut_radius_m": 8},
+    {"ask": "reference"},
+    {"ask": "pitch", "legs": [{"pitch_deg": 20, "length_m": 50}]},
+    {"ask": "board", "nose_m": 0.3, "waist_m": 0.25, "tail_m": 0.3, "effective_edge_m": 1.2},
+    {"ask": "stiffness", "supports_m": 1, "load_kg": 10, "sag_m": 0.01},
+])
+def test_every_topic_has_words(capsys, monkeypatch, question):
+    status, out = run(capsys, monkeypatch, json.dumps(question), "--text")
+    assert status == 0
+    assert out.count("\n") >= 2
+    assert "Closed stays closed" in out
+
+
 @pytest.mark.parametrize("stdin", ["", "{", "[" * 100_000, '{"ask": "turn", "pitch_deg": 75}',
                                    '{"ask": "turn", "pitch_deg": NaN}', "[]"])
 @pytest.mark.parametrize("flags", [[], ["--text"]])

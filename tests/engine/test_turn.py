@@ -152,8 +152,9 @@ def test_continuous_in_speed(pitch_deg, speed):
     """A hundredth of a millimetre per second moves no lean by a hundredth of a degree."""
     one = ask(pitch_deg=pitch_deg, speed_mps=speed)
     other = ask(pitch_deg=pitch_deg, speed_mps=speed + 1e-5)
-    high = one["carve_speed_mps"] and one["carve_speed_mps"]["max"]
-    if high is None or abs(speed - high) < 0.1:
+    # Toward its fastest the carve's lean grows without bound to its slope: stay clear of that.
+    window = one["carve_speed_mps"]
+    if window is None or speed > window["max"] - 0.1:
         return
     for a, b in zip(one["lean_deg"], other["lean_deg"], strict=True):
         if a is not None and b is not None:

@@ -17,6 +17,9 @@ const store = createStore({
   units: DEFAULT_UNITS,
   look: 'auto',
   view: 'turn',
+  board: {},
+  pitch: {},
+  kit: {},
   answers: {},
 });
 

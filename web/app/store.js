@@ -21,13 +21,16 @@ const WRITE_AFTER_MS = 150;
  * @property {import('./units.js').Units} units
  * @property {string} look 'auto', 'light', 'dark' or 'glare'
  * @property {string} view name of the view that is open
+ * @property {Record<string, any>} board what the Board view holds: plain JSON, its own shape
+ * @property {Record<string, any>} pitch what the Pitch view holds, likewise
+ * @property {Record<string, any[]>} kit saved riders, boards and pitches
  * @property {Record<string, {question: object, answer: object}>} answers last good answer by view
  */
 
 /** Parts of the state that a patch merges into instead of replacing. */
-const MERGED = ['inputs', 'units', 'answers'];
+const MERGED = ['inputs', 'units', 'answers', 'board', 'pitch', 'kit'];
 /** Parts of the state that undo brings back. */
-const UNDONE = ['inputs', 'units', 'look'];
+const UNDONE = ['inputs', 'units', 'look', 'board', 'pitch', 'kit'];
 
 /** @param {State} initial the state of a first visit; also says which inputs there are */
 export function createStore(initial) {
@@ -71,7 +74,7 @@ export function createStore(initial) {
     get: () => state,
 
     /**
-     * Changes the state: `inputs`, `units` and `answers` are merged, other keys replaced.
+     * Changes the state: the parts of MERGED are merged, other keys replaced.
      * @param {Partial<State>} patch
      * @param {{undo?: string}} [options] `undo`: name of what is changed; changes of the same
      *   thing in one go are undone together
@@ -134,6 +137,9 @@ function fitted(initial, kept) {
     units: known(initial.units, kept.units),
     look: fits(kept.look) ? kept.look : initial.look,
     view: fits(kept.view) ? kept.view : initial.view,
+    board: { ...initial.board, ...kept.board },
+    pitch: { ...initial.pitch, ...kept.pitch },
+    kit: { ...initial.kit, ...kept.kit },
     answers: { ...initial.answers, ...kept.answers },
   };
 }

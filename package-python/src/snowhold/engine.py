@@ -27,12 +27,18 @@ def answer(question: Any) -> dict[str, Any]:
     ``question`` is a JSON-able dict whose ``ask`` names the topic; its other keys, with their
     units, ranges and defaults, are in the topic module's ``FIELDS``. The answer is a JSON-able
     dict of finite numbers, strings, booleans, nulls, lists and dicts. A question with bad fields
-    is answered by ``{"error": [{"field", "problem", "allowed"}, …]}``, every bad field at once.
+    is answered by ``{"error": [{"field", "problem", "allowed"}, …]}``, every bad field at once. So
+    is a topic that needs numpy where that is not (or not yet) installed.
     """
     try:
         return _topic(question).answer(question)  # type: ignore[no-any-return]
     except BadQuestion as bad:
         return {"error": bad.faults}
+    except ModuleNotFoundError as missing:
+        if missing.name != "numpy":
+            raise
+        return {"error": [{"field": "ask", "problem": "needs numpy, which is not here yet",
+                           "allowed": "this question once numpy is installed or has loaded"}]}
 
 
 def _topic(question: Any) -> Any:

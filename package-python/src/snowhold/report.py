@@ -5,6 +5,9 @@ from __future__ import annotations
 from collections.abc import Callable
 from typing import Any
 
+from snowhold.board_words import board_lines, boards_lines, stiffness_lines
+from snowhold.pitch_words import pitch_lines
+
 VERDICTS = {"holds": "Holds", "marginal": "Marginal", "washes_out": "Washes out",
             "too_slow": "Too slow to carve", "too_fast": "Too fast to carve"}
 
@@ -58,11 +61,58 @@ def turn_lines(reply: dict[str, Any]) -> list[str]:
     lines.append("  No line holds at this speed." if drift is None else
                  f"  Tightest line that holds: {drift['line_radius_m']:.1f} m, lean "
                  f"{drift['lean_deg']:.0f}°, grip margin {drift['grip_margin']:+.0%}.")
+    if reply["chance_holds"] is not None:
+        lines.append(f"  Chance that it holds, inputs being rough: {reply['chance_holds']:.0%}.")
+    lines += ["  " + _change(change) for change in reply["changes"] or []]
     return lines
+
+
+def _change(change: dict[str, Any]) -> str:
+    """One suggestion in words."""
+    name, unit, factor = _INPUTS[change["input"]]
+    if not change["enough"]:
+        return f"{name}: no change of it alone is enough."
+    to = change["to"]
+    return f"{name}: {to if isinstance(to, str) else f'{to * factor:.1f}'} {unit}".rstrip() + "."
+
+
+_INPUTS = {"speed_mps": ("Speed", "km/h", 3.6), "pitch_deg": ("Pitch", "°", 1),
+           "angulation_deg": ("Angulation", "°", 1), "sidecut_radius_m": ("Sidecut radius", "m", 1),
+           "line_radius_m": ("Drift on a line of", "m", 1), "snow": ("Snow", "", 1)}
+"""Inputs that a change may be of: name, unit, and factor from the engine's unit."""
 
 
 def _millimetres(depth_m: float | None) -> str:
     return "out of the snow" if depth_m is None else f"{depth_m * 1000:.1f} mm"
 
 
-_TOPICS: dict[str, Callable[[dict[str, Any]], list[str]]] = {"turn": turn_lines}
+def window_lines(reply: dict[str, Any]) -> list[str]:
+    """A speed window's answer in lines."""
+    lines = ["  pitch   too slow to   holds to   marginal to   carves to (km/h)"]
+    for i in range(0, len(reply["pitch_deg"]), 6):
+        speeds = [reply[key][i] for key in ("slowest_mps", "holds_mps", "marginal_mps",
+                                            "carves_mps")]
+        lines.append(f"  {reply['pitch_deg'][i]:4.0f}°" + "".join(
+            "           -" if speed is None else f"{speed * 3.6:12.0f}" for speed in speeds))
+    steepest = reply["steepest_deg"]["holds"]
+    lines.append("  No speed holds on any pitch." if steepest is None else
+                 f"  Some speed holds up to {steepest:.0f}°.")
+    return lines
+
+
+def reference_lines(reply: dict[str, Any]) -> list[str]:
+    """What the answers rest on, in lines."""
+    lines = [f"  {snow['code']:>2}  {snow['name']}" for snow in reply["snows"]]
+    return lines + [f"  {speed['who']}: {speed['mean_mps'] * 3.6:.1f} km/h ({speed['source']})"
+                    for speed in reply["speeds"]]
+
+
+_TOPICS: dict[str, Callable[[dict[str, Any]], list[str]]] = {
+    "turn": turn_lines,
+    "window": window_lines,
+    "reference": reference_lines,
+    "board": board_lines,
+    "boards": boards_lines,
+    "stiffness": stiffness_lines,
+    "pitch": pitch_lines,
+}
