@@ -304,3 +304,20 @@ def test_every_answer_has_words(fields):
     told = compare([{}, {"stiffness_nm2": fields.get("stiffness_nm2")}],
                    boot=fields.get("boot"))
     assert len(board_words.boards_lines(told)) == 3
+
+
+@pytest.mark.parametrize("line_m", [None, 14.0])
+def test_the_chance_is_that_of_the_rider_s_usual_turn(line_m):
+    """The same turn asked on its own, on the middle pitch: 30 km/h known to a fifth."""
+    told = compare([{}, {"waist_m": 0.26}], boot={"sole_length_m": 0.29}, pitch_low_deg=4,
+                   pitch_high_deg=10, usual_speed_mps=6.5, usual_speed_spread_mps=1.3,
+                   usual_line_radius_m=line_m)["boards"]
+    for board in told:
+        drags = [angle for angle in board["drag_angle_deg"].values() if angle is not None]
+        asked = snowhold.answer({
+            "ask": "turn", "pitch_deg": 7, "speed_mps": 6.5, "samples": 1024, "suggest": False,
+            "sidecut_radius_m": board["sidecut_radius_m"], "line_radius_m": line_m,
+            "effective_edge_m": SHAPE["effective_edge_m"], "spread": {"speed_share": 0.2},
+            "drag_angle_deg": min(drags) if drags else None})
+        assert 0 < board["chance_holds"] < 1
+        assert board["chance_holds"] == pytest.approx(asked["chance_holds"], abs=0.01)

@@ -24,6 +24,7 @@ Big:
 from __future__ import annotations
 
 from collections.abc import Mapping
+from dataclasses import replace
 from math import radians
 from typing import Any
 
@@ -31,7 +32,10 @@ from snowhold import turn
 from snowhold.board import BOARD, RIDER, describe, turn_of
 from snowhold.board_faults import cross_faults, read_all
 from snowhold.carve import speed_window_mps
+from snowhold.changes import DEFAULT_SPREAD
+from snowhold.phases import ridden_phases_deg
 from snowhold.question import Choice, Field, Items, Number, Record
+from snowhold.snow import SNOWS
 from snowhold.speeds import SPEEDS
 from snowhold.suit import SUITS_SHARE
 
@@ -53,9 +57,14 @@ FIELDS: dict[str, Field] = {
     "usual_level": Choice(USUAL_LEVELS, default="snowboarders"),
     "usual_speed_mps": Number(1, 40, "m/s", default=None, null=True),
     "usual_speed_spread_mps": Number(0, 15, "m/s", default=None, null=True),
+    "usual_line_radius_m": turn.FIELDS["line_radius_m"],
 }
 """What a question for several boards may hold. A given usual speed takes the place of the
-published ones of the level. Default pitches assumed."""
+published ones of the level; the usual turn is on the board's own arc, or drifts on the usual line.
+Default pitches assumed."""
+
+SAMPLES = 1024
+"""Samples for the chance of each board."""
 
 DRAG_SLACK_DEG = 3.0
 """How far a drag angle may fall short before the verdict counts it, degrees: 1σ of angulation.
@@ -74,7 +83,9 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
       ``max_mps``}] over the range (null bounds: no speed carves that pitch), ``carve_speed_mps``
       (the speeds that carve all of them, null: none), ``radius_at_45_m`` (``hard_snow``,
       ``bent``, null without a stiffness), ``drag_angle_deg``, ``clear_waist_m`` and ``needed`` at
-      the usual speed on the middle pitch, ``mass_range_kg``, ``stiffness_range_nm2``.
+      the usual speed on the middle pitch, ``mass_range_kg``, ``stiffness_range_nm2``, and
+      ``chance_holds`` of the usual turn on the middle pitch, its speed being spread as the
+      rider's usual speeds are (:func:`snowhold.sure.how_sure`).
     * ``cautions``.
     """
     values = read_all(question, FIELDS, _faults)
@@ -106,7 +117,7 @@ def _side(board: Mapping[str, Any], values: Mapping[str, Any],
     rider = {key: values[key] for key in RIDER}
     low_deg, high_deg = values["pitch_low_deg"], values["pitch_high_deg"]
     one = {**board, **rider, "pitch_deg": (low_deg + high_deg) / 2, "speed_mps": usual["mean"],
-           "line_radius_m": None, "edge_angle_deg": RADIUS_EDGE_DEG}
+           "line_radius_m": values["usual_line_radius_m"], "edge_angle_deg": RADIUS_EDGE_DEG}
     told = describe(one)
     count = _WINDOW_PITCHES if high_deg > low_deg else 1
     windows = [_window(one, told["sidecut_radius_m"],
@@ -128,7 +139,21 @@ def _side(board: Mapping[str, Any], values: Mapping[str, Any],
         "needed": told["needed"],
         "mass_range_kg": told["mass_range_kg"],
         "stiffness_range_nm2": told["stiffness_range_nm2"],
+        "chance_holds": _chance(one, told, usual),
     }
+
+
+def _chance(one: dict[str, Any], told: Mapping[str, Any], usual: Mapping[str, Any]) -> float:
+    """Chance that the usual turn holds on this board, its boots' drag included."""
+    # Numpy is wanted for this only.
+    from snowhold.sure import how_sure
+
+    angles = [angle for angle in (told["drag_angle_deg"] or {}).values() if angle is not None]
+    ride_on = replace(turn_of(one, told["sidecut_radius_m"]),
+                      drag_angle_rad=radians(min(angles)) if angles else None)
+    spread = {**DEFAULT_SPREAD, "speed_share": (usual["high"] - usual["mean"]) / usual["mean"]}
+    return float(how_sure(ride_on, SNOWS[one["snow"]], spread,
+                          ridden_phases_deg(one["from_phase_deg"]), SAMPLES)["chance_holds"])
 
 
 def _window(one: Mapping[str, Any], radius_m: float, pitch_deg: float) -> dict[str, Any]:
