@@ -17,15 +17,21 @@ import { complaint } from './complaint.js';
  * @param {boolean} [given.help] whether the text table explains it
  * @param {number} [given.start] where nudging starts from an empty entry, in the engine's unit
  * @param {Node} [given.aside] what else to say under its name
+ * @param {string} [given.id] where another control of the page has this key, too
+ * @param {{read: (state: any) => any, write: (value: any) => object, path: (state: any) => string}} [given.bind]
+ *   where the value stands that is not one of the state's inputs: how it is read, the patch that
+ *   writes it, the question's key in full
  * @param {ReturnType<import('../store.js').createStore>} given.store
  */
-export function createNumber({ key, kind, span, optional = false, help = false, start = 0, aside, store }) {
+export function createNumber({
+  key, kind, span, optional = false, help = false, start = 0, aside, store, id = `number-${key}`,
+  bind = { read: (state) => state.inputs[key], write: (value) => ({ inputs: { [key]: value } }), path: () => key },
+}) {
   const name = t(`input.${key}`);
-  const id = `number-${key}`;
   const unitNow = () => unitOf(kind, store.get().units);
 
   function put(value) {
-    store.set({ inputs: { [key]: value } }, { undo: key });
+    store.set(bind.write(value), { undo: key });
   }
 
   function typed() {
@@ -37,7 +43,7 @@ export function createNumber({ key, kind, span, optional = false, help = false, 
 
   function nudged(direction) {
     const unit = unitNow();
-    const value = store.get().inputs[key];
+    const value = bind.read(store.get());
     const shown = unit.show(typeof value === 'number' ? value : start);
     const steps = shown / unit.step;
     // To the next full step; a value already on one, up to rounding, moves a whole step.
@@ -103,7 +109,10 @@ export function createNumber({ key, kind, span, optional = false, help = false, 
   function update(state, errors, marked) {
     const unit = unitOf(kind, state.units);
     if (unit !== unitShown) rescale(unit);
-    const value = state.inputs[key];
+    const value = bind.read(state);
+    const path = bind.path(state);
+    setAttribute(field, 'data-question', path);
+    if (range) setAttribute(range, 'data-question', path);
     const number = typeof value === 'number' ? value : null;
     const text = number === null ? String(value ?? '') : showEntry(kind, number, state.units);
     // What is being typed stays as it is typed.
@@ -116,7 +125,7 @@ export function createNumber({ key, kind, span, optional = false, help = false, 
       setAttribute(range, 'aria-valuetext', text + symbol(unit));
     }
     if (errors) {
-      const found = errors.find((one) => one.field === key);
+      const found = errors.find((one) => one.field === path);
       setAttribute(field, 'aria-invalid', found ? 'true' : null);
       setShown(error, Boolean(found));
       setShown(note, !found);

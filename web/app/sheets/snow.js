@@ -11,18 +11,19 @@ export const SNOWS = ['F', '4F', '1F', 'P', 'K', 'I'];
 
 /**
  * @param {ReturnType<import('../store.js').createStore>} store
- * @param {Node} echo the verdict, beside the sheet's name
+ * @param {Node|null} echo the verdict, beside the sheet's name
+ * @param {string} [name] where another view has this sheet, too
  */
-export function createSnowSheet(store, echo) {
+export function createSnowSheet(store, echo, name = 'snow') {
   const choice = createChoice({
-    name: 'snow', legend: t('sheet.snow'), legendHidden: true, question: 'snow',
+    name, legend: t('sheet.snow'), legendHidden: true, question: 'snow',
     options: SNOWS.map((code) => ({
       value: code, label: t(`snow.${code}.title`), detail: t(`snow.${code}.how`),
       picture: drawHandTest(code),
     })),
     onChoose: (code) => store.set({ inputs: { snow: code } }, { undo: 'snow' }),
   });
-  const sheet = createSheet('snow', echo, el('p', { text: t('snow.intro') }), choice.node,
+  const sheet = createSheet(name, echo, el('p', { text: t('snow.intro') }), choice.node,
     el('p', { class: 'aside', text: t('snow.source') }));
   return { ...sheet, update: (state) => choice.update(state.inputs.snow) };
 }

@@ -12,7 +12,7 @@ const SETTLED_MS = 900;
 const TYPE = '600 100px "Barlow Condensed", "Arial Narrow", sans-serif';
 
 /** Width of a text in the verdict's type, in em. */
-const emsWide = (() => {
+export const emsWide = (() => {
   const pen = document.createElement('canvas').getContext('2d');
   return (text) => {
     pen.font = TYPE;
