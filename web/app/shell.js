@@ -89,6 +89,7 @@ function createNav(names, onChoose) {
 function createHill(settings) {
   const text = el('p', { class: 'hill-text', role: 'status' });
   const bar = el('span', { class: 'hill-bar', hidden: true, 'aria-hidden': 'true' });
+  document.querySelector('header').append(bar);
   const say = (key, values) => {
     setText(text, t(key, values));
     settings.sayReady(t(key, values));
@@ -107,5 +108,5 @@ function createHill(settings) {
       else say(`offline.${state}`);
     },
   });
-  return el('footer', { class: 'hill' }, bar, text);
+  return el('footer', { class: 'hill' }, text);
 }

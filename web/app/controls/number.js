@@ -73,7 +73,7 @@ export function createNumber({
   });
   const unitText = el('span', { class: 'unit', 'aria-hidden': 'true' });
   const note = el('p', { class: 'note', id: `${id}-note` }, aside ?? (help ? t(`help.${key}`) : ''));
-  const error = el('p', { class: 'error', id: `${id}-error`, hidden: true });
+  const error = el('p', { class: 'error', id: `${id}-error`, role: 'alert', hidden: true });
   const range = span && el('input', {
     type: 'range', class: 'range', 'data-question': key, 'aria-label': t('input.range', { name }),
     on: {

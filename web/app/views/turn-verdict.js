@@ -21,7 +21,7 @@ export const emsWide = (() => {
 })();
 
 export function createVerdict() {
-  const word = el('p', { class: 'verdict-word', 'data-answer': 'verdict' });
+  const word = el('p', { class: 'verdict-word' });
   const stroke = el('span', { class: 'verdict-stroke', 'aria-hidden': 'true' });
   const reason = el('span', { class: 'why' });
   const figures = { length: createFigure('length'), speedWindow: createFigure('speedWindow') };
@@ -38,14 +38,15 @@ export function createVerdict() {
     word.style.setProperty('--ems', emsWide(text).toFixed(2));
   }
 
-  function announce(text) {
+  function announce() {
+    // What is seen: of the remedy, not the figures that are hidden.
+    const text = `${word.textContent}. ${reason.textContent} ${remedy.innerText}`.trim();
     for (const one of [live, ...echoes.map((echo) => echo.live)]) setText(one, text);
   }
 
   function announceSoon() {
-    const text = `${word.textContent}. ${reason.textContent} ${remedy.textContent}`.trim();
     clearTimeout(timer);
-    if (live.textContent !== text) timer = setTimeout(announce, SETTLED_MS, text);
+    timer = setTimeout(announce, SETTLED_MS);
   }
 
   return {
@@ -65,6 +66,7 @@ export function createVerdict() {
      */
     update(answer, units, old) {
       setWord(t(`verdict.${answer.verdict}`));
+      setAttribute(word, 'data-answer', 'verdict');
       setAttribute(node, 'data-verdict', answer.verdict);
       setAttribute(node, 'data-old', old);
       setText(reason, why(answer));

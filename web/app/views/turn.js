@@ -27,6 +27,8 @@ const SLIDERS = [
   { key: 'speed_mps', kind: 'speed', span: [0, 25] },
   { key: 'sidecut_radius_m', kind: 'length', span: [4, 20] },
 ];
+/** While a slider moves only the verdict is asked for: chances and suggestions take longer. */
+const AT_ONCE = { samples: 0, suggest: false };
 const FIGURES = [
   ['lean', 'angle', 'lean_deg', {}],
   ['edge', 'angle', 'edge_angle_deg', {}],
@@ -90,8 +92,8 @@ export function createTurnView(host, { store, engine }) {
   }
 
   function update(state) {
-    const question = { ask: 'turn', ...state.inputs };
-    const wanted = `${engine.arrays} ${JSON.stringify(question)}`;
+    const question = { ask: 'turn', ...state.inputs, ...AT_ONCE };
+    const wanted = JSON.stringify(question);
     if (wanted !== asked) {
       asked = wanted;
       ask(question);
