@@ -149,15 +149,59 @@ def differences(a, b, path="answer"):
     return [] if same else [f"{path}: {a!r} here, {b!r} in the browser"]
 
 
+def check_alike(page, asked, stage, monkeypatch):
+    """The browser, before or after numpy has joined, answers as CPython here without it or with."""
+    replies = page.evaluate(ASK_ALL, [page.workers[0].url, [json.dumps(q) for q in asked], stage])
+    with monkeypatch.context() as patch:
+        if stage == "ready":
+            patch.setitem(sys.modules, "numpy", None)
+        for question, reply in zip(asked, replies, strict=True):
+            assert differences(snowhold.answer(question), json.loads(reply)) == [], question
+
+
 @pytest.mark.parametrize("stage", ["ready", "arrays"])
-def test_browser_and_desktop_answer_alike(host, page, stage):
-    """Before numpy has joined and after: the same answers as CPython with numpy gives here."""
-    asked = questions(200)
+def test_browser_and_desktop_answer_alike(host, page, stage, monkeypatch):
     page.goto(host.url)
     wait_ready(page)
-    replies = page.evaluate(ASK_ALL, [page.workers[0].url, [json.dumps(q) for q in asked], stage])
-    for question, reply in zip(asked, replies, strict=True):
-        assert differences(snowhold.answer(question), json.loads(reply)) == [], question
+    check_alike(page, questions(200), stage, monkeypatch)
+
+
+SNAPSHOT = """async (change) => {
+    const cache = await caches.open('engine-start');
+    const [key] = await cache.keys();
+    if (!key) return null;
+    const bytes = new Uint8Array(await (await cache.match(key)).arrayBuffer());
+    if (change === 'cut') await cache.put(key, new Response(bytes.slice(0, 1e6)));
+    if (change === 'foreign') await cache.put(key, new Response(bytes.fill(7, 0, 64)));
+    return bytes.length;
+}"""
+
+
+def test_the_second_start_takes_up_a_snapshot(host, page, monkeypatch):
+    """... which answers as the plain start does, and numpy joins it."""
+    page.goto(host.url)
+    wait_arrays(page)
+    assert page.evaluate(SNAPSHOT, None) > 1e7
+    assert page.workers[0].evaluate("self.startedFrom") == "nothing"
+    check_alike(page, questions(40), "ready", monkeypatch)
+    check_alike(page, questions(40), "arrays", monkeypatch)
+    page.reload()
+    wait_arrays(page)
+    assert page.workers[0].evaluate("self.startedFrom") == "snapshot"
+
+
+@pytest.mark.parametrize("change", ["cut", "foreign"])
+def test_a_damaged_snapshot_is_passed_over_and_remade(host, page, change):
+    page.goto(host.url)
+    wait_arrays(page)
+    size = page.evaluate(SNAPSHOT, change)
+    page.reload()
+    wait_arrays(page)
+    assert page.workers[0].evaluate("self.startedFrom") == "nothing"
+    assert page.evaluate(SNAPSHOT, None) == size
+    page.reload()
+    wait_arrays(page)
+    assert page.workers[0].evaluate("self.startedFrom") == "snapshot"
 
 
 def test_a_dead_worker_is_replaced_once(host, page):

@@ -26,8 +26,8 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
     onState(next, message);
   }
 
-  function start() {
-    worker = new Worker(new URL(`../${WORKER_URL}`, import.meta.url), { type: 'module' });
+  function start(name) {
+    worker = new Worker(new URL(`../${WORKER_URL}`, import.meta.url), { type: 'module', name });
     worker.onmessage = ({ data }) => ('state' in data ? heard[data.state]?.(data) : settle(data));
     worker.onerror = (event) => lost(event.message || 'the worker could not be started');
     worker.onmessageerror = () => lost('an answer could not be read');
@@ -49,7 +49,7 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
     for (const channel of channels.values()) clearTimeout(channel.asked?.timer);
     if (restarts-- > 0) {
       tell('starting', message);
-      start();
+      start('plain'); // what the dead one started from may be what killed it
       for (const channel of channels.values()) {
         if (channel.waiting) channel.asked?.resolve(null);
         const next = channel.waiting ?? channel.asked;
@@ -108,7 +108,7 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
   }
 
   tell('starting');
-  start();
+  start('engine');
   return { ask, stop };
 }
 

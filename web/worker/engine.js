@@ -4,25 +4,32 @@
 // Out: {id, answer} | {id, failure}   one for each question
 //      {state: 'ready'}   questions can be answered
 //      {state: 'arrays'}  numpy has joined: an answer may now say more
+//      {state: 'scalar', message}   numpy could not join: answers stay as they are
 //      {state: 'failed', message}   this thread is of no more use
+// A worker that is named 'plain' takes no snapshot: the one that it replaces did not end well.
 import { loadPyodide } from 'pyodide';
 
-const folder = new URL(`../${ENGINE.folder}/`, import.meta.url).href;
+import { dropSnapshot, keepSnapshot, storedSnapshot } from './snapshot.js';
 
-const fetched = async (name) => {
+const folder = new URL(`../${ENGINE.folder}/`, import.meta.url).href;
+const WHEEL = '/lib/snowhold.whl';
+
+const bytesOf = async (name) => {
   const response = await fetch(folder + name);
   if (!response.ok) throw new Error(`${name}: ${response.status} ${response.statusText}`);
-  return response;
+  return new Uint8Array(await response.arrayBuffer());
 };
 
-async function startPython() {
-  const wheel = fetched(ENGINE.wheel).then((response) => response.arrayBuffer());
-  const pyodide = await loadPyodide({ indexURL: folder });
+/** From nothing: the slow way, which always works, and leaves a snapshot for the next start. */
+async function plainStart() {
+  const wheel = bytesOf(ENGINE.wheel);
+  const pyodide = await loadPyodide({ indexURL: folder, _makeSnapshot: true });
   // A wheel of pure Python is a zip that Python imports from as it is.
-  pyodide.FS.writeFile('/lib/snowhold.whl', new Uint8Array(await wheel));
+  pyodide.FS.writeFile(WHEEL, await wheel);
   pyodide.runPython(`
     import json, sys
-    sys.path.append("/lib/snowhold.whl")
+    sys.path.append("${WHEEL}")
+    sys.modules["numpy"] = None  # not here until it has been imported whole, in a quiet moment
     import snowhold
 
     def answer_json(text):
@@ -31,14 +38,36 @@ async function startPython() {
   return pyodide;
 }
 
-const python = startPython();
-const answering = python.then((pyodide) => pyodide.globals.get('answer_json'));
+/** From the memory that an earlier start left here; null when there is none or it does not fit. */
+async function quickStart() {
+  const snapshot = await storedSnapshot();
+  if (!snapshot) return null;
+  try {
+    const pyodide = await loadPyodide({ indexURL: folder, _loadSnapshot: snapshot });
+    pyodide.FS.writeFile(WHEEL, await bytesOf(ENGINE.wheel));
+    return pyodide;
+  } catch (problem) {
+    console.info(`starting afresh: ${problem.message}`);
+    await dropSnapshot();
+    return null;
+  }
+}
+
+async function start() {
+  if (self.name === 'plain') await dropSnapshot();
+  const quick = await quickStart();
+  self.startedFrom = quick ? 'snapshot' : 'nothing'; // for whoever looks with a browser's tools
+  const pyodide = quick ?? await plainStart();
+  return { pyodide, answerJson: pyodide.globals.get('answer_json') };
+}
+
+const started = start();
 let lastAsked = 0;
 
 self.onmessage = async ({ data: { id, question } }) => {
   lastAsked = performance.now();
   try {
-    const answer = (await answering)(question);
+    const answer = (await started).answerJson(question);
     self.postMessage({ id, answer });
   } catch (problem) {
     // A Python exception spoils one question; anything else means that the interpreter is gone.
@@ -53,17 +82,22 @@ function fail(problem) {
 
 const pause = (ms) => new Promise((resolve) => setTimeout(resolve, ms));
 
-/** Load numpy when no question has come for a while: its import holds this thread up. */
+/** Until no question has come for a while: the steps that follow hold this thread up. */
+async function quiet() {
+  do await pause(100); while (performance.now() - lastAsked < 100);
+}
+
 async function loadArrays(pyodide) {
   await pyodide.loadPackage('numpy', { messageCallback() {}, checkIntegrity: false });
-  do await pause(100); while (performance.now() - lastAsked < 100);
-  pyodide.runPython('import numpy');
+  await quiet();
+  pyodide.runPython('del sys.modules["numpy"]\nimport numpy');
   self.postMessage({ state: 'arrays' });
 }
 
-python.then(async (pyodide) => {
+started.then(async ({ pyodide }) => {
   self.postMessage({ state: 'ready' });
-  await pause(0);
+  await quiet();
+  if (self.startedFrom === 'nothing') await keepSnapshot(pyodide);
   await loadArrays(pyodide).catch((problem) => {
     self.postMessage({ state: 'scalar', message: String(problem?.message ?? problem) });
   });
