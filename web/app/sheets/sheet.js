@@ -14,6 +14,8 @@ import { t } from '../text.js';
 export function createSheet(name, aside, ...content) {
   const title = el('h2', { id: `sheet-${name}-title`, text: t(`sheet.${name}`), tabindex: '-1', autofocus: true });
   const body = el('div', { class: 'sheet-body' }, ...content);
+  // Where nothing inside takes the focus, the text itself does: it may need scrolling by keys.
+  if (!body.querySelector('input, button')) body.tabIndex = 0;
   const dialog = el('dialog', {
     class: 'sheet', id: `sheet-${name}`, 'aria-labelledby': title.id,
     // A press on the dimmed page behind the sheet closes it.
