@@ -57,7 +57,36 @@ RANGES = {name: (field.low, field.high) for name, field in FIELDS.items()
 
 
 def answer(question: dict[str, Any]) -> dict[str, Any]:
-    """Answer a turn question; raises :class:`snowhold.question.BadQuestion` on bad fields."""
+    """Answer a turn question; raises :class:`snowhold.question.BadQuestion` on bad fields.
+
+    Lists have one entry a phase, in the order of travel, null where there is no balance:
+
+    * ``phase_deg``: the ridden phases, or the one that is asked for.
+    * ``lean_deg``, ``edge_angle_deg``, ``turn_radius_m``, ``load_g``, ``penetration_m``.
+    * ``grip_margin``, the ``limit`` that sets it (:data:`snowhold.grip.LIMITS`) and ``state``
+      (:data:`snowhold.grip.STATES`).
+    * ``pivoted``: the given line is tighter there than the tilted board carves.
+    * ``least_edge_angle_deg``, ``drift_angle_deg``, ``groove_width_m``: how it drifts
+      (:class:`snowhold.phases.Slip`).
+
+    And of the turn as a whole:
+
+    * ``verdict``: its worst state. ``worst``: the figures of that phase; ``reason``: its ``state``,
+      ``limit`` and ``zone`` (above, on or below the fall line, or whole).
+      ``first_fail_phase_deg``: the first phase that neither holds nor is marginal, or null.
+    * ``carve_speed_mps``: ``min`` and ``max`` that balance on the board's own arc throughout;
+      ``hold_speed_mps``: that hold with margin throughout. Null: no speed does.
+    * ``drift``: :func:`tightest_line`, or null.
+    * ``edge_catch``: ``clearance_angle_deg`` below which a drifting board's leading edge can
+      catch, and the ``phases_deg`` of the given line that come under it.
+    * ``chance_holds``, ``chances``, ``margin_band``, ``balanced_share``:
+      :func:`snowhold.sure.how_sure`; null without numpy or with ``samples`` 0.
+    * ``changes``: :func:`snowhold.changes.changes`; null with ``suggest`` false.
+    * ``picture``: paths from above, x across the hill and y down the fall line, m: ``path_m`` of
+      the turn as asked, ``own_path_m`` of the board's own arc where a line is given,
+      ``drift_path_m`` of the tightest line that holds.
+    * ``cautions``: codes of the warnings that belong beside the answer.
+    """
     values = read(question, FIELDS)
     turn = turn_of(values)
     whole_deg = ridden_phases_deg(values["from_phase_deg"])
