@@ -13,10 +13,12 @@ const store = createStore({
   inputs: {
     pitch_deg: 15, speed_mps: 20 / 3.6, sidecut_radius_m: 8, snow: 'P', rider_mass_kg: 80,
     angulation_deg: 5, max_load_g: 2, effective_edge_m: 1.2, line_radius_m: null, drag_angle_deg: null,
+    from_phase_deg: 0,
   },
   units: DEFAULT_UNITS,
   look: 'auto',
   view: 'turn',
+  turn: { spread: {}, run: {} },
   board: {},
   pitch: {},
   kit: {},

@@ -21,6 +21,8 @@ const WRITE_AFTER_MS = 150;
  * @property {import('./units.js').Units} units
  * @property {string} look 'auto', 'light', 'dark' or 'glare'
  * @property {string} view name of the view that is open
+ * @property {{spread: Record<string, any>, run: Record<string, any>}} turn how rough the turn's inputs
+ *   are (what is not here is as assumed), and the run of turns
  * @property {Record<string, any>} board what the Board view holds: plain JSON, its own shape
  * @property {Record<string, any>} pitch what the Pitch view holds, likewise
  * @property {Record<string, any[]>} kit saved riders, boards and pitches
@@ -28,9 +30,9 @@ const WRITE_AFTER_MS = 150;
  */
 
 /** Parts of the state that a patch merges into instead of replacing. */
-const MERGED = ['inputs', 'units', 'answers', 'board', 'pitch', 'kit'];
+const MERGED = ['inputs', 'units', 'answers', 'turn', 'board', 'pitch', 'kit'];
 /** Parts of the state that undo brings back. */
-const UNDONE = ['inputs', 'units', 'look', 'board', 'pitch', 'kit'];
+const UNDONE = ['inputs', 'units', 'look', 'turn', 'board', 'pitch', 'kit'];
 
 /** @param {State} initial the state of a first visit; also says which inputs there are */
 export function createStore(initial) {
@@ -137,6 +139,7 @@ function fitted(initial, kept) {
     units: known(initial.units, kept.units),
     look: fits(kept.look) ? kept.look : initial.look,
     view: fits(kept.view) ? kept.view : initial.view,
+    turn: { ...initial.turn, ...kept.turn },
     board: { ...initial.board, ...kept.board },
     pitch: { ...initial.pitch, ...kept.pitch },
     kit: { ...initial.kit, ...kept.kit },
