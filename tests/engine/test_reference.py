@@ -43,5 +43,11 @@ def test_ranges_are_those_that_the_turn_allows():
                 assert ("error" not in snowhold.answer({**good, name: end})) == ok
 
 
+def test_spread_is_the_one_that_a_question_without_any_has():
+    question = {"ask": "turn", "pitch_deg": 18, "speed_mps": 6, "sidecut_radius_m": 8}
+    told = snowhold.answer(question | {"spread": REFERENCE["turn_spread"]})
+    assert told == snowhold.answer(question)
+
+
 def test_nothing_else_is_asked():
     assert "error" in snowhold.answer({"ask": "reference", "pitch_deg": 3})

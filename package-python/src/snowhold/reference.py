@@ -1,13 +1,14 @@
 """``ask: "reference"``: what the answers rest on, for the page to show.
 
 The classes of snow with their ranges, the published speeds, and the ranges of the turn's
-numbers (what a slider may offer).
+numbers (what a slider may offer) with their spread where none is given.
 """
 
 from __future__ import annotations
 
 from typing import Any
 
+from snowhold.changes import DEFAULT_SPREAD
 from snowhold.question import Choice, Field, read
 from snowhold.snow import SNOWS
 from snowhold.speeds import SPEEDS
@@ -18,7 +19,7 @@ FIELDS: dict[str, Field] = {"ask": Choice(("reference",))}
 
 
 def answer(question: dict[str, Any]) -> dict[str, Any]:
-    """Answer a reference question: ``snows``, ``speeds`` and ``turn_ranges``."""
+    """Answer a reference question: ``snows``, ``speeds``, ``turn_ranges`` and ``turn_spread``."""
     read(question, FIELDS)
     return {
         "snows": [{
@@ -30,5 +31,6 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
         } for snow in SNOWS.values()],
         "speeds": [vars(speed) for speed in SPEEDS.values()],
         "turn_ranges": {name: {"low": low, "high": high} for name, (low, high) in RANGES.items()},
+        "turn_spread": dict(DEFAULT_SPREAD),
         "cautions": ["estimate"],
     }
