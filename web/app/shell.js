@@ -6,10 +6,12 @@ import { startOffline } from './offline.js';
 import { createCautionSheet } from './sheets/caution.js';
 import { createSettingsSheet } from './sheets/settings.js';
 import { formatNumber, language, t } from './text.js';
+import { createPitchView } from './views/pitch.js';
+import { followPitchLinks } from './views/pitch-link.js';
 import { createTurnView } from './views/turn.js';
 
 /** The views by name, in the order of the navigation. The contract of a view: views/turn.js. */
-const VIEWS = { turn: createTurnView };
+const VIEWS = { turn: createTurnView, pitch: createPitchView };
 
 /** @param {{store: ReturnType<import('./store.js').createStore>, engine: any}} context */
 export function createShell(context) {
@@ -23,7 +25,9 @@ export function createShell(context) {
   const hosts = Object.fromEntries(Object.keys(VIEWS).map((name) =>
     [name, el('section', { class: `view ${name}-view`, 'aria-label': t(`view.${name}`), hidden: true })]));
   main.append(...Object.values(hosts));
-  const views = Object.fromEntries(Object.entries(VIEWS).map(([name, create]) => [name, create(hosts[name], context)]));
+  /** A view is made when it is first shown: what nobody looks at takes no time to start. */
+  const views = {};
+  const viewOf = (name) => (views[name] ??= VIEWS[name](hosts[name], context));
   const nav = createNav(Object.keys(VIEWS), (view) => store.set({ view }));
   document.querySelector('header').after(nav.node);
   const hill = createHill(settings);
@@ -32,19 +36,20 @@ export function createShell(context) {
   let current = null;
   function update() {
     const state = store.get();
-    const view = state.view in views ? state.view : 'turn';
+    const view = Object.hasOwn(VIEWS, state.view) ? state.view : 'turn';
     if (view !== current) {
-      if (current) views[current].hide();
-      views[view].show();
+      if (current) viewOf(current).hide();
+      viewOf(view).show();
       nav.update(view);
       current = view;
     }
-    views[view].update(state);
+    viewOf(view).update(state);
     header.update(state.answers[view]?.answer.cautions ?? []);
     settings.update(state);
   }
   store.subscribe(update);
   update();
+  followPitchLinks(store);
   return { update };
 }
 

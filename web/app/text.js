@@ -1,8 +1,9 @@
 /** Words and numbers in the reader's language: one table a language, numbers by locale. */
 
 import { en } from './text/en.js';
+import { enPitch } from './text/en-pitch.js';
 
-const TABLES = { en };
+const TABLES = { en: { ...en, ...enPitch } };
 
 /** Language of the text: the first of the browser's that has a table, else English. */
 export const language =

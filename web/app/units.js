@@ -48,6 +48,14 @@ const KINDS = {
   mass: { m: factor('unit.kg', 1, 0, 1), ft: factor('unit.lb', 1 / 0.45359237, 0, 1) },
   load: { g: factor('unit.g', 1, 2, 0.1) },
   share: { percent: factor('unit.percent', 100, 0, 1) },
+  percent: { percent: factor('unit.percent', 1, 0, 1) },
+  // Along a slope metres are enough.
+  slope: { m: factor('unit.m', 1, 0, 5), ft: factor('unit.ft', 1 / 0.3048, 0, 10) },
+  altitude: { m: factor('unit.m', 1, 0, 100), ft: factor('unit.ft', 1 / 0.3048, 0, 500) },
+  friction: { one: factor('unit.one', 1, 2, 0.05) },
+  reaction: { s: factor('unit.s', 1, 1, 0.1) },
+  temperature: { c: factor('unit.c', 1, 0, 1) },
+  dragArea: { m2: factor('unit.m2', 1, 2, 0.05) },
 };
 
 KINDS.bareSpeed = KINDS.speedWindow;
@@ -63,7 +71,7 @@ export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'],
 export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm' };
 
 /** Kinds that follow the choice of another. */
-const FOLLOWS = { edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed' };
+const FOLLOWS = { slope: 'length', altitude: 'length', edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed' };
 
 /**
  * The unit in which a kind of quantity is shown.
