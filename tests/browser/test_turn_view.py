@@ -259,6 +259,24 @@ def test_state_survives_a_closed_tab(turn, installed):
     again.close()
 
 
+def test_a_kept_state_of_another_version_does_no_harm(turn):
+    turn.evaluate("""() => new Promise((done) => {
+        const open = indexedDB.open('keyval-store');
+        open.onsuccess = () => {
+            const write = open.result.transaction('keyval', 'readwrite');
+            write.objectStore('keyval').put({ version: 1, state: {
+                inputs: { pitch_deg: 21, speed_mps: [], gone: 3 }, look: {},
+                answers: { turn: { question: {}, answer: { verdict: 'holds' } } },
+            } }, 'snowhold-state');
+            write.oncomplete = () => { open.result.close(); done(); };
+        };
+    })""")
+    turn.reload()
+    wait_ready(turn)
+    settled(turn)
+    shows(turn, question(pitch_deg=21))
+
+
 def test_units_change_what_is_shown_and_not_what_is_asked(turn):
     set_typed(turn, pitch_deg="20", speed_mps="23.8")
     asked = question(pitch_deg=20, speed_mps=23.8 / 3.6)

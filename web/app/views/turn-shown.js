@@ -28,11 +28,11 @@ export function zoneOf(phaseDeg) {
 
 /**
  * @param {any} answer the turn's answer
- * @param {any} wider where the drifted line leads: the answer for the turn on that line
+ * @param {any} wider where the drifted line leads: the answer for the turn on that line, if any
  * @param {number|null} picked index of a phase to look at; null: the tightest point
  */
 export function shownTurn(answer, wider, picked) {
-  const drifts = driftLeads(answer);
+  const drifts = driftLeads(answer) && wider !== null;
   const ride = drifts ? wider : answer;
   const tightest = drifts ? 'drift' : 'worst';
   const source = picked === null ? answer : ride;

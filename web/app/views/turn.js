@@ -51,7 +51,11 @@ export function createTurnView(host, { store, engine }) {
   const figuresSheet = createFiguresSheet();
   const snow = dockButton('sheet.snow', snowSheet.open);
   const rider = dockButton('dock.rider', riderSheet.open);
-  const more = dockButton('dock.more', () => { figuresSheet.open(); render(); });
+  const more = dockButton('dock.more', () => {
+    figuresSheet.open();
+    drawn = [];
+    render();
+  });
   const undo = dockButton('undo', () => store.undo());
   setText(more.value, t('dock.figures'));
 
@@ -67,6 +71,10 @@ export function createTurnView(host, { store, engine }) {
   let errors = [];
   /** Index of the phase that the reader looks at; null: the tightest point. */
   let picked = null;
+  /** Whether the engine has answered since the page was opened. */
+  let fresh = false;
+  /** What the answer on the page was drawn from. */
+  let drawn = [];
 
   async function ask(question) {
     const mine = asked;
@@ -82,9 +90,11 @@ export function createTurnView(host, { store, engine }) {
       if (driftLeads(answer)) {
         wider = await engine.ask('turn-line', { ...question, line_radius_m: answer.drift.line_radius_m });
         if (wider === null || asked !== mine) return;
+        if (wider.error) wider = null; // a line too wide to be asked about
       }
       errors = [];
       picked = null;
+      fresh = true;
       store.set({ answers: { turn: { question, answer, wider } } });
     } catch {
       // The engine has failed; main.js hears of it and has the view updated.
@@ -125,7 +135,20 @@ export function createTurnView(host, { store, engine }) {
       pictures.preview(typeof inputs.pitch_deg === 'number' ? inputs.pitch_deg : 0);
       return;
     }
-    const { question, answer, wider } = kept;
+    // Drawn again only if something in it has changed: an input alone changes no picture.
+    const from = [kept, units, picked, old];
+    if (from.every((part, i) => part === drawn[i])) return;
+    drawn = from;
+    try {
+      renderAnswer(kept, units, old);
+    } catch (problem) {
+      if (fresh) throw problem;
+      // What was kept is another version's answer: do without.
+      store.set({ answers: { turn: null } });
+    }
+  }
+
+  function renderAnswer({ question, answer, wider }, units, old) {
     const shown = shownTurn(answer, wider, picked);
     verdict.update(answer, units, Boolean(old));
     for (const { figure, key, name, label } of figures) {
