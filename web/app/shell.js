@@ -6,12 +6,13 @@ import { startOffline } from './offline.js';
 import { createCautionSheet } from './sheets/caution.js';
 import { createSettingsSheet } from './sheets/settings.js';
 import { formatNumber, language, t } from './text.js';
+import { createBoardView } from './views/board.js';
 import { createPitchView } from './views/pitch.js';
 import { followPitchLinks } from './views/pitch-link.js';
 import { createTurnView } from './views/turn.js';
 
 /** The views by name, in the order of the navigation. The contract of a view: views/turn.js. */
-const VIEWS = { turn: createTurnView, pitch: createPitchView };
+const VIEWS = { turn: createTurnView, board: createBoardView, pitch: createPitchView };
 
 /** @param {{store: ReturnType<import('./store.js').createStore>, engine: any}} context */
 export function createShell(context) {

@@ -1,9 +1,10 @@
 /** Words and numbers in the reader's language: one table a language, numbers by locale. */
 
 import { en } from './text/en.js';
+import { enBoard } from './text/en-board.js';
 import { enPitch } from './text/en-pitch.js';
 
-const TABLES = { en: { ...en, ...enPitch } };
+const TABLES = { en: { ...en, ...enPitch, ...enBoard } };
 
 /** Language of the text: the first of the browser's that has a table, else English. */
 export const language =

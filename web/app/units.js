@@ -46,6 +46,17 @@ const KINDS = {
   edge: { m: factor('unit.cm', 100, 0, 1), ft: factor('unit.in', 1 / 0.0254, 1, 0.5) },
   depth: { m: factor('unit.mm', 1000, 1, 1), ft: factor('unit.in', 1 / 0.0254, 2, 0.05) },
   mass: { m: factor('unit.kg', 1, 0, 1), ft: factor('unit.lb', 1 / 0.45359237, 0, 1) },
+  // A board's measures: widths by tape, lengths along it, and what is small beside it.
+  width: {
+    cm: factor('unit.cm', 100, 1, 0.1), mm: factor('unit.mm', 1000, 0, 1), in: factor('unit.in', 1 / 0.0254, 2, 0.05),
+  },
+  along: {
+    cm: factor('unit.cm', 100, 0, 1), mm: factor('unit.mm', 1000, 0, 5), in: factor('unit.in', 1 / 0.0254, 1, 0.5),
+  },
+  small: {
+    cm: factor('unit.mm', 1000, 0, 1), mm: factor('unit.mm', 1000, 0, 1), in: factor('unit.in', 1 / 0.0254, 2, 0.05),
+  },
+  stiffness: { nm2: factor('unit.nm2', 1, 0, 10) },
   load: { g: factor('unit.g', 1, 2, 0.1) },
   share: { percent: factor('unit.percent', 100, 0, 1) },
   percent: { percent: factor('unit.percent', 1, 0, 1) },
@@ -63,15 +74,18 @@ KINDS.bareSpeed = KINDS.speedWindow;
 const BARE = ['bareSpeed'];
 
 /** What the settings offer. */
-export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'], length: ['m', 'ft'] };
+export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'], length: ['m', 'ft'], board: ['cm', 'mm', 'in'] };
 
-/** @typedef {{speed: string, pitch: string, length: string}} Units */
+/** @typedef {{speed: string, pitch: string, length: string, board: string}} Units */
 
 /** @type {Units} */
-export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm' };
+export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm', board: 'cm' };
 
 /** Kinds that follow the choice of another. */
-const FOLLOWS = { slope: 'length', altitude: 'length', edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed' };
+const FOLLOWS = {
+  width: 'board', along: 'board', small: 'board', slope: 'length', altitude: 'length',
+  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed',
+};
 
 /**
  * The unit in which a kind of quantity is shown.

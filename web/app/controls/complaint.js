@@ -4,10 +4,11 @@ import { formatNumber, t } from '../text.js';
 import { symbol } from '../units.js';
 
 /**
- * @param {{problem: string, allowed: string}} error
+ * @param {{problem: string, allowed: string, text?: string}} error `text`: said already
  * @param {import('../units.js').Unit} unit
  */
-export function complaint({ problem, allowed }, unit) {
+export function complaint({ problem, allowed, text: said }, unit) {
+  if (said) return said;
   const range = /(from|above) ([\d.e+-]+) (?:up )?to ([\d.e+-]+)/.exec(allowed);
   if (!range) return t('error.allowed', { allowed });
   const [low, high] = [range[2], range[3]].map((end) =>
