@@ -70,8 +70,9 @@ const KINDS = {
 };
 
 KINDS.bareSpeed = KINDS.speedWindow;
+KINDS.wholeSpeed = KINDS.speed;
 /** Kinds whose unit stands beside them already. */
-const BARE = ['bareSpeed'];
+const BARE = ['bareSpeed', 'wholeSpeed'];
 
 /** What the settings offer. */
 export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'], length: ['m', 'ft'], board: ['cm', 'mm', 'in'] };
@@ -84,7 +85,7 @@ export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm', board: '
 /** Kinds that follow the choice of another. */
 const FOLLOWS = {
   width: 'board', along: 'board', small: 'board', slope: 'length', altitude: 'length',
-  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed',
+  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed', wholeSpeed: 'speed',
 };
 
 /**
