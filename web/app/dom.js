@@ -51,5 +51,6 @@ export function setText(node, text) {
 
 /** Shows or hides a node, keeping it out of the accessibility tree too. */
 export function setShown(node, shown) {
-  if (node.hidden === shown) node.hidden = !shown;
+  // As an attribute: SVG nodes have no such property.
+  setAttribute(node, 'hidden', !shown);
 }

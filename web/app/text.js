@@ -3,8 +3,9 @@
 import { en } from './text/en.js';
 import { enBoard } from './text/en-board.js';
 import { enPitch } from './text/en-pitch.js';
+import { enTurnMore } from './text/en-turn-more.js';
 
-const TABLES = { en: { ...en, ...enPitch, ...enBoard } };
+const TABLES = { en: { ...en, ...enPitch, ...enTurnMore, ...enBoard } };
 
 /** Language of the text: the first of the browser's that has a table, else English. */
 export const language =

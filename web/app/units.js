@@ -67,12 +67,18 @@ const KINDS = {
   reaction: { s: factor('unit.s', 1, 1, 0.1) },
   temperature: { c: factor('unit.c', 1, 0, 1) },
   dragArea: { m2: factor('unit.m2', 1, 2, 0.05) },
+  hundred: { count: factor('unit.inHundred', 100, 0, 1) },
+  fineAngle: { deg: factor('unit.deg', 1, 1, 1) },
+  time: { s: factor('unit.s', 1, 0, 1) },
+  distance: { m: factor('unit.m', 1, 0, 10), ft: factor('unit.ft', 1 / 0.3048, 0, 10) },
+  count: { one: factor('unit.none', 1, 0, 1) },
 };
 
 KINDS.bareSpeed = KINDS.speedWindow;
+KINDS.bareHundred = KINDS.hundred;
 KINDS.wholeSpeed = KINDS.speed;
 /** Kinds whose unit stands beside them already. */
-const BARE = ['bareSpeed', 'wholeSpeed'];
+const BARE = ['bareSpeed', 'wholeSpeed', 'bareHundred'];
 
 /** What the settings offer. */
 export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'], length: ['m', 'ft'], board: ['cm', 'mm', 'in'] };
@@ -85,7 +91,7 @@ export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm', board: '
 /** Kinds that follow the choice of another. */
 const FOLLOWS = {
   width: 'board', along: 'board', small: 'board', slope: 'length', altitude: 'length',
-  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed', wholeSpeed: 'speed',
+  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed', wholeSpeed: 'speed', distance: 'length',
 };
 
 /**

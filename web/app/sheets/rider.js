@@ -9,7 +9,6 @@ const INPUTS = [
   { key: 'angulation_deg', kind: 'angle' },
   { key: 'max_load_g', kind: 'load' },
   { key: 'effective_edge_m', kind: 'edge' },
-  { key: 'line_radius_m', kind: 'length', optional: true, start: 10 },
   { key: 'drag_angle_deg', kind: 'angle', optional: true, start: 60 },
 ];
 

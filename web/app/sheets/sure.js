@@ -21,19 +21,22 @@ export function createSureSheet({ store, echo, reference }) {
   const [before, after] = [el('span'), el('span')];
   const lead = el('p', { class: 'lead', hidden: true }, before, chance.node, after);
   const waiting = el('p', { text: t('sure.waiting') });
+  const onLine = el('p', { class: 'aside' });
   const shares = STATES.map((state) => ({ state, figure: createFigure('bareHundred') }));
   const list = el('dl', { class: 'rows shares' }, ...shares.map(({ state, figure }) =>
     el('div', { class: 'row' }, el('dt', { text: t(`state.${state}`) }), el('dd', {}, figure.node))));
   const band = createBand();
   const picture = createMeasured('band-box', band.node, draw);
-  const found = el('div', { class: 'found', hidden: true }, el('h3', { text: t('sure.band') }), picture.node,
-    el('p', { class: 'aside', text: t('sure.band.key') }), el('h3', { text: t('sure.of') }), list);
+  const along = el('div', { class: 'found', hidden: true }, el('h3', { text: t('sure.band') }), picture.node,
+    el('p', { class: 'aside', text: t('sure.band.key') }));
+  const found = el('div', { class: 'found', hidden: true }, el('h3', { text: t('sure.of') }), list);
   const numbers = Object.entries(SPREADS).map(([key, kind]) => createSpread(key, kind, store, reference));
-  const reset = el('button', { type: 'button', class: 'plain-button', text: t('sure.reset'),
+  const reset = el('button', { type: 'button', class: 'act', text: t('sure.reset'),
     on: { click: () => store.set({ turn: { spread: {} } }, { undo: 'spread' }) } });
-  const sheet = createSheet('sure', echo(), lead, waiting,
+  const sheet = createSheet('sure', lead, waiting, onLine, along,
     el('h3', { text: t('sure.spread') }), el('p', { class: 'aside', text: t('sure.spread.help') }),
     ...numbers.map(({ number }) => number.node), reset, found);
+  sheet.dialog.querySelector('.sheet-head').append(echo());
   let drawn = null;
 
   function draw(size) {
@@ -48,10 +51,10 @@ export function createSureSheet({ store, echo, reference }) {
 
   return {
     ...sheet,
-    update({ state, full, errors }) {
+    update({ state, sure: full, errors }) {
       const { units } = state;
       for (const { key, number, mark } of numbers) {
-        number.update(state, errors.concat(full.errors ?? []));
+        number.update(state, errors.concat(full.errors));
         setText(mark, t(key in state.turn.spread ? 'sure.yours' : 'sure.assumed'));
         setShown(number.node, key !== 'line_share' || state.inputs.line_radius_m !== null);
       }
@@ -59,8 +62,12 @@ export function createSureSheet({ store, echo, reference }) {
       const answer = full.answer?.chance_holds === null ? null : full.answer;
       setShown(lead, answer !== null);
       setShown(waiting, answer === null);
-      setShown(found, answer !== null);
-      setAttribute(found, 'data-old', full.old);
+      for (const one of [along, found]) {
+        setShown(one, answer !== null);
+        setAttribute(one, 'data-old', full.old);
+      }
+      setShown(onLine, full.lineM !== null);
+      if (full.lineM !== null) setText(onLine, t('sure.onLine', { radius: show('length', full.lineM, units) }));
       setAttribute(lead, 'data-old', full.old);
       if (!answer) return;
       const [start, end = ''] = t('sure.lead').split('{chance}');

@@ -2,6 +2,7 @@
 export const enTurnMore = {
   'unit.inHundred': 'in 100',
   'unit.s': 's',
+  'unit.none': '',
 
   'figure.chance': 'Holds',
   'figure.chance.label': 'How sure: it holds {chance}. Opens how well you know this',
@@ -58,6 +59,7 @@ export const enTurnMore = {
   'sheet.sure': 'How well do you know this?',
   'sure.lead': '{chance} turns like this hold.',
   'sure.waiting': 'The chance comes when the calculation has loaded.',
+  'sure.onLine': 'For the turn drifted on {radius}; carved it is too fast.',
   'sure.of': 'Of 100 turns',
   'sure.band': 'Grip margin along the turn',
   'sure.band.label':
@@ -82,7 +84,7 @@ export const enTurnMore = {
   'input.spread.sidecut_share': 'Sidecut ±',
   'input.spread.angulation_deg': 'Angulation ±',
   'input.spread.line_share': 'Line radius ±',
-  'input.spread.snow_share': 'Snow, share of its class',
+  'input.spread.snow_share': 'Snow: share of its class',
   'input.spread': 'Give or take',
 
   'sheet.window': 'Speed window',

@@ -56,13 +56,9 @@ export const en = {
   'why.washes_out.rider': '{Zone} the load beats the legs.',
   'why.too_slow': '{Zone} gravity alone outturns the board.',
   'why.too_fast': '{Zone} the speed outruns the board’s arc.',
+  'why.pivoted': 'Tighter than the board carves: pivot it.',
   // What would make it hold; {figure} is a figure of the answer.
   'fix.too_fast': 'Drift it on {figure} or wider.',
-  'fix.washes_out': 'Holds drifted on {figure} or wider.',
-  'fix.none': 'No line holds at this speed.',
-  'fix.too_slow': 'Carves from {figure} on.',
-  'fix.noSpeed': 'No speed carves this whole turn.',
-  'fix.pivoted': 'Tighter than the board carves: pivot it.',
 
   'figure.lean': 'Lean',
   'figure.edge': 'Edge angle',

@@ -34,8 +34,8 @@ function fine(kind, value, units) {
 function cost(kind, from, to, units) {
   const unit = unitOf(kind, units);
   const apart = Math.abs(unit.show(to) - unit.show(from));
-  const tenths = Math.max(1, Math.ceil(apart * 10 - 1e-3));
-  return formatNumber(tenths / 10, { decimals: 1, least: 0 }) + symbol(unit);
+  const step = apart < 10 ? 0.1 : 1;
+  return formatNumber(Math.max(1, Math.ceil(apart / step - 1e-3)) * step, { decimals: 1, least: 0 }) + symbol(unit);
 }
 
 /**

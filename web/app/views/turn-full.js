@@ -9,22 +9,23 @@ const PAUSE_MS = 150;
 /**
  * @param {object} given
  * @param {any} given.engine
+ * @param {string} given.channel
  * @param {() => void} given.onAnswer
  */
-export function createFullAnswer({ engine, onAnswer }) {
+export function createFullAnswer({ engine, channel, onAnswer }) {
   let wanted = '';
   let timer = 0;
   /** Answer to `at`; what it says is old while `at` is not what is wanted. */
-  let kept = { at: '', answer: null };
+  let kept = { at: '', answer: null, lineM: null };
   let errors = [];
 
   async function ask(question) {
     const at = wanted;
     try {
-      const answer = await engine.ask('turn-full', question);
+      const answer = await engine.ask(channel, question);
       if (answer === null || at !== wanted) return;
       errors = answer.error ?? [];
-      if (!answer.error) kept = { at, answer };
+      if (!answer.error) kept = { at, answer, lineM: question.line_radius_m };
       onAnswer();
     } catch {
       // The engine has failed; the view says so.
@@ -45,6 +46,8 @@ export function createFullAnswer({ engine, onAnswer }) {
     get answer() { return kept.answer; },
     /** What was wrong with the last question, the engine's complaints. */
     get errors() { return errors; },
+    /** The line that it is for, m, or null. */
+    get lineM() { return kept.lineM; },
     /** Whether it is not the answer to what is set now. */
     get old() { return kept.at !== wanted; },
   };

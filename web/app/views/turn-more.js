@@ -11,6 +11,11 @@ import { t } from '../text.js';
 import { show } from '../units.js';
 import { createFix } from './turn-fix.js';
 import { createFullAnswer } from './turn-full.js';
+import { driftLeads } from './turn-shown.js';
+
+const SHEETS = {
+  changes: createChangesSheet, sure: createSureSheet, window: createWindowSheet, line: createLineSheet, run: createRunSheet,
+};
 
 /**
  * @param {object} given
@@ -20,21 +25,22 @@ import { createFullAnswer } from './turn-full.js';
  * @param {() => void} given.onChange what is shown has changed, though the state has not
  */
 export function createTurnMore({ store, engine, echo, onChange }) {
-  const full = createFullAnswer({ engine, onAnswer: onChange });
+  const full = createFullAnswer({ engine, channel: 'turn-full', onAnswer: onChange });
+  /** Where the drifted line leads, the chance is for the turn on it. */
+  const onLine = createFullAnswer({ engine, channel: 'turn-full-line', onAnswer: onChange });
+  const forCarve = { get answer() { return full.answer; }, get old() { return full.old; }, get errors() { return full.errors; }, lineM: null };
   const reference = createReference(engine, onChange);
-  const given = { store, engine, echo, onChange, reference };
-  const sheets = {
-    changes: createChangesSheet(given), sure: createSureSheet(given), window: createWindowSheet(given),
-    line: createLineSheet(given), run: createRunSheet(given),
-  };
+  /** Sheets by name; each is made when it is first opened. */
+  const sheets = {};
   const open = (name) => {
+    sheets[name] ??= SHEETS[name]({ store, engine, echo, onChange, reference });
     sheets[name].open();
     reference.want();
     onChange();
   };
   const fix = createFix({ store, onList: () => open('changes') });
   const chance = createChance(() => open('sure'));
-  const ways = Object.keys(sheets).map((name) => ({ name, ...createWay(name, () => open(name)) }));
+  const ways = Object.keys(SHEETS).map((name) => ({ name, ...createWay(name, () => open(name)) }));
 
   return {
     fix,
@@ -51,19 +57,23 @@ export function createTurnMore({ store, engine, echo, onChange }) {
      */
     update(state, kept, errors) {
       const { units } = state;
+      const drifts = Boolean(kept) && driftLeads(kept.answer);
+      if (drifts) {
+        onLine.want({ ask: 'turn', ...state.inputs, line_radius_m: kept.answer.drift.line_radius_m, spread: state.turn.spread, suggest: false });
+      }
+      const sure = drifts ? onLine : forCarve;
       if (kept) fix.update(kept.answer, full, units);
-      chance.update(full, units);
-      for (const { name, value } of ways) {
+      chance.update(sure, units);
+      for (const { name, node, value } of ways) {
         if (name !== 'line') continue;
+        setAttribute(node, 'data-wrong', errors.some(({ field }) => field === 'line_radius_m' || field === 'from_phase_deg'));
         const radius = state.inputs.line_radius_m;
         setText(value, typeof radius === 'number' ? t('ways.line.line', { radius: show('length', radius, units) }) : t('ways.line.carve'));
       }
       for (const sheet of Object.values(sheets)) {
-        if (sheet.dialog.open) sheet.update({ state, kept, full, errors });
+        if (sheet.dialog.open) sheet.update({ state, kept, full, sure, errors });
       }
     },
-    /** Whether one of the sheets has the input of a field. */
-    has: (field) => ['line_radius_m', 'from_phase_deg'].includes(field) || field.startsWith('spread'),
   };
 }
 

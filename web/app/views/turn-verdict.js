@@ -1,10 +1,9 @@
 /** The verdict: a word as large as the screen allows, its reason under it, said once when settled. */
 
-import { el, setAttribute, setShown, setText } from '../dom.js';
-import { createFigure } from '../figure.js';
+import { el, setAttribute, setText } from '../dom.js';
 import { t } from '../text.js';
 import { show } from '../units.js';
-import { fix, why } from './turn-words.js';
+import { why } from './turn-words.js';
 
 /** A verdict that stands this long is read out, ms. */
 const SETTLED_MS = 900;
@@ -20,16 +19,15 @@ export const emsWide = (() => {
   };
 })();
 
-export function createVerdict() {
+/** @param {{node: Node, text: () => string}} remedy what would make it hold, and its words */
+export function createVerdict(remedy) {
   const word = el('p', { class: 'verdict-word' });
   const stroke = el('span', { class: 'verdict-stroke', 'aria-hidden': 'true' });
-  const reason = el('span', { class: 'why' });
-  const figures = { length: createFigure('length'), speedWindow: createFigure('speedWindow') };
-  const [before, after] = [el('span'), el('span')];
-  const remedy = el('strong', { class: 'fix' }, before, figures.length.node, figures.speedWindow.node, after);
+  const reason = el('p', { class: 'why' });
   const live = el('p', { class: 'visually-hidden', 'aria-live': 'polite' });
-  const node = el('div', { class: 'verdict' }, word, stroke, el('p', { class: 'says' }, reason, ' ', remedy), live);
+  const node = el('div', { class: 'verdict' }, word, stroke, el('div', { class: 'says' }, reason, remedy.node), live);
   const echoes = [];
+  let inShort = '';
   let timer = 0;
 
   function setWord(text) {
@@ -39,8 +37,7 @@ export function createVerdict() {
   }
 
   function announce() {
-    // What is seen: of the remedy, not the figures that are hidden.
-    const text = `${word.textContent}. ${reason.textContent} ${remedy.innerText}`.trim();
+    const text = `${word.textContent}. ${reason.textContent} ${remedy.text()}`.trim();
     for (const one of [live, ...echoes.map((echo) => echo.live)]) setText(one, text);
   }
 
@@ -54,7 +51,6 @@ export function createVerdict() {
     /** Says how things stand while there is no answer at all; empty: there is one. */
     say(text) {
       if (!text) return;
-      for (const figure of Object.values(figures)) setShown(figure.node, false);
       setWord(t('verdict.none'));
       setText(reason, text);
       setAttribute(node, 'data-verdict', 'none');
@@ -69,26 +65,16 @@ export function createVerdict() {
       setAttribute(word, 'data-answer', 'verdict');
       setAttribute(node, 'data-verdict', answer.verdict);
       setAttribute(node, 'data-old', old);
-      setText(reason, why(answer));
-      const { text, kind, key } = fix(answer);
-      const [start, end = ''] = text.split('{figure}');
-      setText(before, start);
-      setText(after, end);
-      for (const [name, figure] of Object.entries(figures)) {
-        setShown(figure.node, name === kind);
-        if (name === kind) figure.update(answer, key, units);
-        else setAttribute(figure.node, 'data-answer', null);
-      }
+      setText(reason, answer.pivoted.some(Boolean) ? `${why(answer)} ${t('why.pivoted')}` : why(answer));
       const margin = show('share', answer.worst.grip_margin, units, { signed: true });
-      for (const echo of echoes) {
-        setText(echo.seen, answer.worst.grip_margin === null ? word.textContent
-          : t('verdict.echo', { verdict: word.textContent, margin }));
-      }
+      inShort = answer.worst.grip_margin === null ? word.textContent
+        : t('verdict.echo', { verdict: word.textContent, margin });
+      for (const echo of echoes) setText(echo.seen, inShort);
       if (!old) announceSoon();
     },
     /** The verdict in short for a sheet that covers it; read out there when settled, too. */
     echo() {
-      const echo = { seen: el('span', { 'aria-hidden': 'true' }), live: el('span', { class: 'visually-hidden', 'aria-live': 'polite' }) };
+      const echo = { seen: el('span', { 'aria-hidden': 'true', text: inShort }), live: el('span', { class: 'visually-hidden', 'aria-live': 'polite' }) };
       echoes.push(echo);
       return el('p', { class: 'echo' }, echo.seen, echo.live);
     },

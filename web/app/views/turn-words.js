@@ -10,20 +10,6 @@ export function why({ reason: { state, limit, zone } }) {
     { close: t(`close.${zone}`), Zone: t(`Zone.${zone}`) });
 }
 
-/**
- * What would make it hold: a key of the text table with one `{figure}`, and the figure in it.
- * @returns {{text: string, kind?: string, key?: string}}
- */
-export function fix(answer) {
-  const { verdict, drift, carve_speed_mps: window } = answer;
-  if (answer.pivoted.some(Boolean)) return { text: t('fix.pivoted') };
-  if (verdict === 'too_slow') {
-    return window ? { text: t('fix.too_slow'), kind: 'speedWindow', key: 'carve_speed_mps.min' } : { text: t('fix.noSpeed') };
-  }
-  if (verdict !== 'too_fast' && verdict !== 'washes_out') return { text: '' };
-  return drift ? { text: t(`fix.${verdict}`), kind: 'length', key: 'drift.line_radius_m' } : { text: t('fix.none') };
-}
-
 /** Where the section is drawn. */
 export function caption(shown, answer, units) {
   const phase = show('angle', shown.phaseDeg, units);

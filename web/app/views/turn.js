@@ -17,6 +17,7 @@ import { createRiderSheet } from '../sheets/rider.js';
 import { createSnowSheet } from '../sheets/snow.js';
 import { hasText, t } from '../text.js';
 import { show as showQuantity } from '../units.js';
+import { createTurnMore } from './turn-more.js';
 import { createTurnPictures } from './turn-pictures.js';
 import { driftLeads, shownTurn } from './turn-shown.js';
 import { createVerdict } from './turn-verdict.js';
@@ -40,7 +41,8 @@ const FIGURES = [
  * @param {{store: ReturnType<import('../store.js').createStore>, engine: any}} context
  */
 export function createTurnView(host, { store, engine }) {
-  const verdict = createVerdict();
+  const further = createTurnMore({ store, engine, echo: () => verdict.echo(), onChange: () => renderFurther() });
+  const verdict = createVerdict(further.fix);
   const figures = FIGURES.map(([name, kind, key, options]) => ({ key, name, figure: createFigure(kind, options), label: el('dt', { text: t(`figure.${name}`) }) }));
   const pictures = createTurnPictures({ onPick: (index) => { picked = index; render(); } });
   const speedWindow = createWindow();
@@ -61,11 +63,11 @@ export function createTurnView(host, { store, engine }) {
 
   host.append(
     el('div', { class: 'look' }, verdict.node,
-      el('dl', { class: 'figures' }, ...figures.map(({ label, figure }) =>
-        el('div', {}, label, el('dd', {}, figure.node)))),
+      el('div', { class: 'figures' }, el('dl', {}, ...figures.map(({ label, figure }) =>
+        el('div', {}, label, el('dd', {}, figure.node)))), further.chance),
       pictures.node),
     el('div', { class: 'set' }, ...numbers.map((number) => number.node),
-      el('div', { class: 'dock' }, snow.node, rider.node, more.node, undo.node)));
+      el('div', { class: 'dock' }, snow.node, rider.node, more.node, undo.node), further.ways));
 
   let asked = '';
   let errors = [];
@@ -108,6 +110,7 @@ export function createTurnView(host, { store, engine }) {
       asked = wanted;
       ask(question);
     }
+    further.ask({ ask: 'turn', ...state.inputs });
     render();
   }
 
@@ -137,15 +140,22 @@ export function createTurnView(host, { store, engine }) {
     }
     // Drawn again only if something in it has changed: an input alone changes no picture.
     const from = [kept, units, picked, old];
-    if (from.every((part, i) => part === drawn[i])) return;
-    drawn = from;
     try {
-      renderAnswer(kept, units, old);
+      if (from.some((part, i) => part !== drawn[i])) {
+        drawn = from;
+        renderAnswer(kept, units, old);
+      }
+      renderFurther();
     } catch (problem) {
       if (fresh) throw problem;
       // What was kept is another version's answer: do without.
       store.set({ answers: { turn: null } });
     }
+  }
+
+  function renderFurther() {
+    const state = store.get();
+    further.update(state, state.answers.turn, errors);
   }
 
   function renderAnswer({ question, answer, wider }, units, old) {

@@ -1,0 +1,125 @@
+/** A run of turns: how it ends, where it first fails, and whether any speed carves the pitch. */
+
+import { el, setAttribute, setShown, setText } from '../dom.js';
+import { createFigure } from '../figure.js';
+import { createMeasured } from '../pictures/measured.js';
+import { createRunPicture, runHeight, STRIPS } from '../pictures/run.js';
+import { t } from '../text.js';
+import { show } from '../units.js';
+import { createRunSetup, runQuestion } from './run-setup.js';
+import { createSheet } from './sheet.js';
+
+const ROWS = [
+  ['run.time', 'time', 'time_s'], ['run.distance', 'distance', 'distance_m'], ['run.top', 'speed', 'top_speed_mps'],
+  ['run.end', 'speed', 'end_speed_mps'], ['run.worst', 'share', 'worst.grip_margin'], ['run.critical', 'fineAngle', 'critical_pitch_deg'],
+];
+
+/** @param {{store: any, engine: any, onChange: () => void}} given */
+export function createRunSheet({ store, engine, onChange }) {
+  const word = el('p', { class: 'lead', 'data-run': '' });
+  const why = el('p');
+  const noSpeed = el('p', { class: 'strong no-speed' });
+  const noSpeedWhy = el('p', { class: 'aside', text: t('run.noSpeed.why') });
+  const drift = el('button', { type: 'button', class: 'act', on: { click: toggleLine } });
+  const picture = createRunPicture();
+  const box = createMeasured('run-box', picture.node, draw);
+  const rows = ROWS.map(([label, kind, key]) => {
+    const figure = createFigure(kind, { signed: kind === 'share' });
+    return { figure, key, node: el('div', { class: 'row' }, el('dt', { text: t(label) }), el('dd', {}, figure.node)) };
+  });
+  const friction = el('p', { class: 'aside', text: t('run.driftFriction') });
+  const result = el('div', { class: 'run-result', 'data-ask': 'run' }, noSpeed, noSpeedWhy, drift, box.node, friction,
+    el('dl', { class: 'rows' }, ...rows.map(({ node }) => node)));
+  const setup = createRunSetup(store);
+  const sheet = createSheet('run', null, el('div', { role: 'status' }, word, why), result, setup.node);
+
+  let asked = '';
+  let errors = [];
+  let answer = null;
+  /** The line that a press of the button sets; null: carve. */
+  let line = null;
+  let units = null;
+
+  async function ask(question) {
+    const wanted = JSON.stringify(question);
+    if (wanted === asked) return;
+    asked = wanted;
+    try {
+      const found = await engine.ask('turn-run', question);
+      if (found === null) return;
+      errors = found.error ?? [];
+      if (!found.error) answer = found;
+      onChange();
+    } catch {
+      // The engine has failed; the view says so.
+    }
+  }
+
+  function toggleLine() {
+    store.seal();
+    store.set({ inputs: { line_radius_m: line } }, { undo: 'line_radius_m' });
+    store.seal();
+  }
+
+  function draw(size) {
+    if (!answer) return;
+    const { path, fails_at: fails } = answer;
+    const spans = spansOf(path, units);
+    picture.update({ path, fails, words: {
+      path: t('run.path'), fails: fails ? t(`state.${fails.state}`) : '',
+      titles: Object.fromEntries(STRIPS.map(({ name }) => [name, t(`run.${name}`)])), spans,
+    } }, size);
+  }
+
+  return {
+    ...sheet,
+    update({ state, kept }) {
+      units = state.units;
+      ask(runQuestion(state));
+      setup.update(state, errors);
+      setShown(result, answer !== null);
+      if (!answer) {
+        setText(word, t(errors.length ? 'run.unknown' : 'run.waiting'));
+        return;
+      }
+      const { fails_at: fails, legs, end } = answer;
+      setText(word, fails ? t(`run.fails.${fails.state}`, { turn: fails.turn }) : t(`run.verdict.${answer.verdict}`));
+      setAttribute(word, 'data-run', answer.verdict);
+      const sentences = [];
+      if (fails) {
+        sentences.push(t('run.fails.why', {
+          phase: show('angle', fails.phase_deg, units), distance: show('distance', fails.distance_m, units),
+          speed: show('speed', fails.speed_mps, units), why: t(`run.why.${fails.limit ?? fails.state}`),
+        }));
+        if (fails.state === 'washes_out') sentences.push(t('run.past'));
+      }
+      if (end === 'stops') sentences.push(t('run.stops'));
+      setText(why, sentences.join(' '));
+      const steep = legs?.find((leg) => leg.no_speed_carves);
+      setShown(noSpeed, Boolean(steep));
+      setShown(noSpeedWhy, Boolean(steep));
+      if (steep) setText(noSpeed, legs.length > 1 ? t('run.noSpeed.leg', { pitch: show('pitch', steep.pitch_deg, units) }) : t('run.noSpeed'));
+      const carves = state.inputs.line_radius_m === null;
+      line = carves ? kept?.answer.drift?.line_radius_m ?? null : null;
+      setShown(drift, !carves || line !== null);
+      setText(drift, carves ? t('run.drift', { radius: show('length', line, units) }) : t('run.carve'));
+      setShown(friction, answer.cautions.includes('drift_friction'));
+      for (const { figure, key } of rows) figure.update(answer, key, units);
+      const spans = spansOf(answer.path, units);
+      const span = (name) => t('run.picture.span', { from: spans[name][0], to: spans[name][1] });
+      setAttribute(picture.node, 'aria-label', t('run.picture.label', {
+        fails: `${word.textContent}.`, speed: span('speed'), load: span('load'), lean: span('lean'), margin: span('margin') }));
+      box.node.style.height = `${runHeight(answer.path, box.node.clientWidth || 330)}px`;
+      box.redraw();
+    },
+  };
+}
+
+/** Least and most of each strip, in words. */
+function spansOf(path, units) {
+  return Object.fromEntries(STRIPS.map(({ name, key, kind }) => {
+    const known = path[key].filter((value) => value !== null);
+    const text = (value) => (known.length ? show(kind, value, units, { signed: kind === 'share' }) : '–');
+    return [name, [text(Math.min(...known)), text(Math.max(...known))]];
+  }));
+}
