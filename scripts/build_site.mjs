@@ -68,11 +68,13 @@ function placeRuntime() {
 function writePage() {
   let html = fs.readFileSync(path.join(web, 'index.html'), 'utf8');
   const sources = [...html.matchAll(/(?:src|href)="([^":#]+\.(?:js|css))"/g)].map((match) => match[1]);
-  const built = bundle(sources, { define: { WORKER_URL: JSON.stringify(worker) } });
+  const define = { WORKER_URL: JSON.stringify(worker) };
+  const built = bundle(sources, { define });
+  const early = bundle(['app/early.js'], { define, format: 'iife' })['app/early.js'];
   for (const source of sources) html = html.replaceAll(`"${source}"`, `"${built[source]}"`);
   const policy = `<meta http-equiv="Content-Security-Policy" content="${headers['Content-Security-Policy']}">`;
   html = html.replace(/<meta http-equiv="Content-Security-Policy"[^>]*>\s*/, '')
-    .replace(/<meta charset="utf-8">/i, (charset) => `${charset}\n  ${policy}`);
+    .replace(/<meta charset="utf-8">/i, (charset) => `${charset}\n  ${policy}\n  <script async src="${early}"></script>`);
   if (!html.includes(policy)) throw new Error('index.html needs <meta charset="utf-8">');
   fs.writeFileSync(path.join(out, 'index.html'), html);
 }

@@ -170,10 +170,15 @@ SNAPSHOT = """async (change) => {
     const cache = await caches.open('engine-start');
     const [key] = await cache.keys();
     if (!key) return null;
-    const bytes = new Uint8Array(await (await cache.match(key)).arrayBuffer());
-    if (change === 'cut') await cache.put(key, new Response(bytes.slice(0, 1e6)));
-    if (change === 'foreign') await cache.put(key, new Response(bytes.fill(7, 0, 64)));
-    return bytes.length;
+    const found = await cache.match(key);
+    const { headers } = found;
+    const bytes = new Uint8Array(await found.arrayBuffer());
+    const length = bytes.length;
+    if (change === 'foreign') bytes.fill(7, 0, 64);
+    if (change) {
+        await cache.put(key, new Response(change === 'cut' ? bytes.slice(0, 1e6) : bytes, { headers }));
+    }
+    return length;
 }"""
 
 

@@ -1,6 +1,7 @@
 // The page's side of the engine: starts the worker, puts questions, drops what a newer one overtook.
 
-const PATIENCE_MS = 30_000; // a question that takes longer than this has hung the worker
+// What takes longer than this has hung. A start from the network may take as long as it takes.
+const PATIENCE_MS = 30_000;
 
 /**
  * Start the engine.
@@ -16,6 +17,7 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
   const channels = new Map(); // name → {asked, waiting}: one question in the worker, one behind it
   let worker;
   let restarts = 1;
+  let startWatch;
   let state;
   let serial = 0;
 
@@ -27,14 +29,24 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
   }
 
   function start(name) {
-    worker = new Worker(new URL(`../${WORKER_URL}`, import.meta.url), { type: 'module', name });
+    const early = globalThis.snowholdEarly; // early.js has started one already
+    delete globalThis.snowholdEarly;
+    worker = early?.worker
+      ?? new Worker(new URL(`../${WORKER_URL}`, import.meta.url), { type: 'module', name });
     worker.onmessage = ({ data }) => ('state' in data ? heard[data.state]?.(data) : settle(data));
     worker.onerror = (event) => lost(event.message || 'the worker could not be started');
     worker.onmessageerror = () => lost('an answer could not be read');
+    for (const data of early?.heard ?? []) worker.onmessage({ data });
   }
 
   const heard = {
-    ready: () => tell('ready'),
+    // The worker needs no network for this start.
+    restoring() { startWatch = setTimeout(lost, PATIENCE_MS, 'the engine did not start'); },
+    ready() {
+      clearTimeout(startWatch);
+      tell('ready');
+      for (const { asked } of channels.values()) watch(asked);
+    },
     arrays() {
       document.documentElement.dataset.arrays = 'ready';
       onArrays();
@@ -45,6 +57,7 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
   /** The worker is gone: start another one, once, and put the newest questions again. */
   function lost(message) {
     worker.terminate();
+    clearTimeout(startWatch);
     delete document.documentElement.dataset.arrays;
     for (const channel of channels.values()) clearTimeout(channel.asked?.timer);
     if (restarts-- > 0) {
@@ -69,8 +82,12 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
 
   function send(channel, asked) {
     channel.asked = asked;
-    asked.timer = setTimeout(lost, PATIENCE_MS, 'a question took too long');
+    if (state === 'ready') watch(asked);
     worker.postMessage({ id: asked.id, question: asked.question });
+  }
+
+  function watch(asked) {
+    if (asked) asked.timer = setTimeout(lost, PATIENCE_MS, 'a question took too long');
   }
 
   function settle({ id, answer, failure }) {

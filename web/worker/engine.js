@@ -2,6 +2,7 @@
 //
 // In:  {id, question}   question and answer are JSON texts
 // Out: {id, answer} | {id, failure}   one for each question
+//      {state: 'restoring'}   a start that needs no network has begun
 //      {state: 'ready'}   questions can be answered
 //      {state: 'arrays'}  numpy has joined: an answer may now say more
 //      {state: 'scalar', message}   numpy could not join: answers stay as they are
@@ -9,21 +10,15 @@
 // A worker that is named 'plain' takes no snapshot: the one that it replaces did not end well.
 import { loadPyodide } from 'pyodide';
 
+import { bytesOf, load } from './head-start.js';
 import { dropSnapshot, keepSnapshot, storedSnapshot } from './snapshot.js';
 
-const folder = new URL(`../${ENGINE.folder}/`, import.meta.url).href;
 const WHEEL = '/lib/snowhold.whl';
-
-const bytesOf = async (name) => {
-  const response = await fetch(folder + name);
-  if (!response.ok) throw new Error(`${name}: ${response.status} ${response.statusText}`);
-  return new Uint8Array(await response.arrayBuffer());
-};
 
 /** From nothing: the slow way, which always works, and leaves a snapshot for the next start. */
 async function plainStart() {
   const wheel = bytesOf(ENGINE.wheel);
-  const pyodide = await loadPyodide({ indexURL: folder, _makeSnapshot: true });
+  const pyodide = await load(loadPyodide, { _makeSnapshot: true });
   // A wheel of pure Python is a zip that Python imports from as it is.
   pyodide.FS.writeFile(WHEEL, await wheel);
   pyodide.runPython(`
@@ -42,8 +37,9 @@ async function plainStart() {
 async function quickStart() {
   const snapshot = await storedSnapshot();
   if (!snapshot) return null;
+  self.postMessage({ state: 'restoring' });
   try {
-    const pyodide = await loadPyodide({ indexURL: folder, _loadSnapshot: snapshot });
+    const pyodide = await load(loadPyodide, { _loadSnapshot: snapshot.bytes });
     pyodide.FS.writeFile(WHEEL, await bytesOf(ENGINE.wheel));
     return pyodide;
   } catch (problem) {

@@ -8,15 +8,22 @@
 const STORE = 'engine-start';
 // The worker's own name has a hash of all that the snapshot depends on: it is the snapshot's key.
 const KEY = `${self.location.pathname}.snapshot`;
+const LENGTH = 'X-Length';
 
-/** The snapshot of this very version, or null. */
+/** The snapshot of this very version, still being read, or null. */
 export async function storedSnapshot() {
   try {
     const found = await self.caches?.match(KEY, { cacheName: STORE });
-    return found ? new Uint8Array(await found.arrayBuffer()) : null;
+    return found ? { bytes: checked(found) } : null;
   } catch {
     return null;
   }
+}
+
+async function checked(found) {
+  const bytes = new Uint8Array(await found.arrayBuffer());
+  if (bytes.length !== Number(found.headers.get(LENGTH))) throw new Error('the snapshot is cut short');
+  return bytes;
 }
 
 /** Keep the memory as it is now, in place of any other version's. numpy must not be in it yet. */
@@ -24,7 +31,8 @@ export async function keepSnapshot(pyodide) {
   try {
     const cache = await self.caches?.open(STORE);
     if (!cache) return;
-    await cache.put(KEY, new Response(pyodide.makeMemorySnapshot()));
+    const bytes = pyodide.makeMemorySnapshot();
+    await cache.put(KEY, new Response(bytes, { headers: { [LENGTH]: bytes.length } }));
     for (const { url } of await cache.keys()) {
       if (new URL(url).pathname !== KEY) await cache.delete(url);
     }
