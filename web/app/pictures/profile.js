@@ -5,7 +5,7 @@
  * middle and rough clothing, so that it reads in grey.
  */
 
-import { setAttribute, setAttributes, setShown, setText, svg } from '../dom.js';
+import { setAttribute, setAttributes, setText, svg } from '../dom.js';
 import { at, disc, line, polygon } from './geometry.js';
 
 export const WAYS = ['slick', 'middle', 'rough'];
@@ -18,7 +18,7 @@ const LETTER = 0.5;
 export function createProfile(presentational) {
   const part = (name) => svg('path', { class: name });
   const parts = Object.fromEntries(['snow', 'band', 'ticks', 'surface', 'asked', 'rough', 'middle', 'slick',
-    'leaders', 'halts', 'fall-post', 'fall', 'rule'].map((name) => [name, part(name)]));
+    'halts', 'fall-post', 'fall', 'rule'].map((name) => [name, part(name)]));
   const labels = svg('g');
   const pool = [];
   const node = svg('svg', {
@@ -33,9 +33,9 @@ export function createProfile(presentational) {
     const half = text.length * em * LETTER * (anchor === 'middle' ? 0.5 : 1);
     const from = anchor === 'start' ? 2 : half + 2;
     const to = width - 2 - (anchor === 'end' ? 0 : half);
-    setShown(one, true);
     setText(one, text);
     setAttributes(one, {
+      hidden: false,
       class: `label ${kind}`, 'text-anchor': anchor, 'data-answer': key,
       x: Math.max(from, Math.min(to, x)).toFixed(1), y: y.toFixed(1),
     });
@@ -47,9 +47,9 @@ export function createProfile(presentational) {
    * @param {any} shown.profile the answer's lists for drawing
    * @param {{start_m: number, end_m: number, text: string, short: string}[]} shown.legs with their labels
    * @param {{at_m: number, text: string}} shown.fall
-   * @param {{way: string, at_m: number, text: string}[]} shown.halts
+   * @param {number[]} shown.halts where a slide stops, m along the slope
    * @param {boolean} shown.asks whether the clothing asked for is none of the three
-   * @param {(slow: number|null, fast: number, last: boolean) => string} shown.speedText
+   * @param {(slow: number, fast: number, last: boolean) => string} shown.speedText
    * @param {{length_m: number, text: string}[]} shown.rules lengths to choose the scale's from
    * @param {{width: number, height: number, em: number}} size px
    */
@@ -58,14 +58,17 @@ export function createProfile(presentational) {
     const { distance_m: along, x_m: xs, height_m: hs, speed_mps: speeds } = profile;
     const fastest = speeds.fastest;
     const top = Math.max(0, ...fastest.map((v) => v ?? 0));
-    const margin = { left: 14, right: 14, top: em * 2.4, bottom: em * (1.7 + 1.25 * halts.length) };
-    const perSpeed = top > 0 ? (height * SPEED_SHARE - em) / top : 0;
+    const margin = { left: 14, right: 14, top: em * 2.4, bottom: em * 2 };
+    let perSpeed = top > 0 ? (height * SPEED_SHARE - em) / top : 0;
     const room = height - margin.top - margin.bottom;
     const scale = Math.min((width - margin.left - margin.right) / xs.at(-1),
       ...hs.map((h, i) => (h > 1e-6 ? Math.max(room - (fastest[i] ?? 0) * perSpeed, room * 0.2) / h : Infinity)));
     const left = (width - xs.at(-1) * scale) / 2;
     /** Where the drawing stands when it is lower than the picture. */
-    const highest = Math.max(...hs.map((h, i) => h * scale + (fastest[i] ?? 0) * perSpeed));
+    const tallest = () => Math.max(...hs.map((h, i) => h * scale + (fastest[i] ?? 0) * perSpeed));
+    // On a flat slope there is room for the speeds.
+    perSpeed *= Math.max(1, Math.min(1.6, room / (tallest() || room)));
+    const highest = tallest();
     const floor = height - margin.bottom - Math.max(0, (room - highest) * 0.35);
     const ground = along.map((_, i) => [left + xs[i] * scale, floor - hs[i] * scale]);
     const over = (list, i) => [ground[i][0], ground[i][1] - (list[i] ?? 0) * perSpeed];
@@ -96,35 +99,28 @@ export function createProfile(presentational) {
     // The end first, then the breaks that have room.
     let taken = Infinity;
     [...breaks].reverse().forEach((i, order) => {
-      const text = shown.speedText(speeds.slowest[i], fastest[i], order === 0 && i === along.length - 1);
+      const text = shown.speedText(speeds.slowest[i] ?? 0, fastest[i], order === 0 && i === along.length - 1);
       const wide = text.length * em * LETTER;
       const right = Math.min(width - 4, ground[i][0] + wide / 2);
       if (right > taken - em * 0.5) return;
       taken = right - wide;
-      put(text, [right, over(fastest, i)[1] - em * 0.45], { anchor: 'end', kind: 'speed', key: `profile.speed_mps.fastest.${i}` });
+      // Over every line that is under the label.
+      const under = ground.map((_, j) => over(fastest, j)).filter(([x]) => x > taken - em && x < right + 4);
+      const y = Math.min(over(fastest, i)[1], ...under.map((point) => point[1]));
+      put(text, [right, Math.max(em * 2.2, y - em * 0.45)], { anchor: 'end', kind: 'speed', key: `profile.speed_mps.fastest.${i}` });
     });
-    const ordered = [...halts].sort((a, b) => b.at_m - a.at_m);
-    const leaders = [];
-    ordered.forEach(({ at_m, text, way }, row) => {
-      const [x, y] = ground[indexAt(at_m)];
-      const below = height - margin.bottom + em * (1.7 + 1.25 * row) + em * 0.75;
-      leaders.push(line([x, y], [x, below - em * 0.85]));
-      put(text, [x, below], { kind: 'on-snow', key: `levels.${WAYS.indexOf(way)}.distance_m` });
-    });
-    setAttribute(parts.leaders, 'd', leaders.join('') || null);
-    setAttribute(parts.halts, 'd', ordered.map(({ at_m }) => disc(ground[indexAt(at_m)], 5)).join('') || null);
+    setAttribute(parts.halts, 'd', halts.map((place) => disc(ground[indexAt(place)], 5.5)).join('') || null);
 
     const [fx, fy] = ground[indexAt(fall.at_m)];
     const post = over(fastest, indexAt(fall.at_m));
     setAttribute(parts['fall-post'], 'd', line([fx, fy], post));
     setAttribute(parts.fall, 'd', disc([fx, fy], 9));
+    // Its name where no speed stands, else to its left where that has room.
     const fallWide = fall.text.length * em * LETTER;
-    const low = post[1] - em * 0.6;
-    if (fx - fallWide / 2 < taken && fx + fallWide / 2 < taken) {
-      put(fall.text, [fx, Math.max(em, low)], { kind: 'accent' });
-    }
+    if (fx + fallWide / 2 < taken) put(fall.text, [fx, Math.max(em, post[1] - em * 0.5)], { kind: 'accent' });
+    else if (fx > fallWide + 16) put(fall.text, [fx - 14, fy - em * 0.4], { anchor: 'end', kind: 'accent' });
     drawRule(shown.rules, scale);
-    pool.slice(count).forEach((one) => setShown(one, false));
+    pool.slice(count).forEach((one) => setAttribute(one, 'hidden', true));
 
     function drawRule(rules, perMetre) {
       const rule = rules.findLast(({ length_m }) => length_m * perMetre <= width * 0.25) ?? rules[0];

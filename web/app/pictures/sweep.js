@@ -1,6 +1,6 @@
-/** Speed at the end of the slope against the pitch of one leg, a line for each clothing. */
+/** Speed at the foot of one leg against its pitch, a line for each clothing. */
 
-import { setAttribute, setAttributes, setShown, setText, svg } from '../dom.js';
+import { setAttribute, setAttributes, setText, svg } from '../dom.js';
 import { at, line } from './geometry.js';
 import { WAYS } from './profile.js';
 
@@ -24,7 +24,7 @@ export function createSweep() {
    */
   function update({ sweep, nowDeg, pitchText, ticks, words }, { width, height, em }) {
     const box = { left: em * 3, right: width - em * 3.4, top: em * 1.8, bottom: height - em * 1.6 };
-    const most = Math.max(1, ...sweep.levels.flatMap(({ end_speed_mps }) => end_speed_mps));
+    const most = Math.max(1, ...sweep.levels.flatMap(({ foot_speed_mps }) => foot_speed_mps));
     const last = sweep.pitch_deg.at(-1);
     const x = (deg) => box.left + (deg / last) * (box.right - box.left);
     const y = (speed) => box.bottom - (speed / most) * (box.bottom - box.top);
@@ -32,9 +32,8 @@ export function createSweep() {
     const write = (text, [tx, ty], anchor, kind = 'small') => {
       const one = pool[count] ?? (pool[count] = labels.appendChild(svg('text', {})));
       count += 1;
-      setShown(one, true);
       setText(one, text);
-      setAttributes(one, { class: `label ${kind}`, 'text-anchor': anchor, x: tx.toFixed(1), y: ty.toFixed(1) });
+      setAttributes(one, { hidden: false, class: `label ${kind}`, 'text-anchor': anchor, x: tx.toFixed(1), y: ty.toFixed(1) });
     };
     setAttribute(node, 'viewBox', `0 0 ${width} ${height}`);
     const inside = ticks.filter(({ speed_mps }) => speed_mps <= most);
@@ -45,13 +44,13 @@ export function createSweep() {
     for (const deg of PITCH_TICKS) write(pitchText(deg), [x(deg), box.bottom + em * 1.2], 'middle');
     setAttribute(parts.axis, 'd', `M${at([box.left, box.top])}V${box.bottom.toFixed(1)}H${box.right.toFixed(1)}`);
     WAYS.forEach((way, i) => {
-      const speeds = sweep.levels[i].end_speed_mps;
+      const speeds = sweep.levels[i].foot_speed_mps;
       setAttribute(parts[way], 'd', `M${speeds.map((speed, j) => at([x(sweep.pitch_deg[j]), y(speed)])).join('L')}`);
     });
     // Names at the lines' ends, kept apart.
     let above = -Infinity;
     WAYS.forEach((way, i) => {
-      const place = Math.max(y(sweep.levels[i].end_speed_mps.at(-1)) + em * 0.35, above + em * 1.05);
+      const place = Math.max(y(sweep.levels[i].foot_speed_mps.at(-1)) + em * 0.35, above + em * 1.05);
       above = place;
       write(words[way], [box.right + em * 0.35, Math.min(place, box.bottom - (2 - i) * em * 1.05 + em)], 'start', '');
     });
@@ -59,7 +58,7 @@ export function createSweep() {
     setAttribute(parts.now, 'd', shows ? line([x(nowDeg), box.top], [x(nowDeg), box.bottom]) : null);
     if (shows) write(words.now, [x(nowDeg), box.top - em * 0.4], 'middle', 'accent');
     write(words.y, [2, em * 0.9], 'start');
-    pool.slice(count).forEach((one) => setShown(one, false));
+    pool.slice(count).forEach((one) => setAttribute(one, 'hidden', true));
   }
 
   return { node, update };

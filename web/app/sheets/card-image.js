@@ -7,7 +7,7 @@ const HEAD = '"Barlow Condensed", "Arial Narrow", sans-serif';
 
 /**
  * @param {ReturnType<import('../views/pitch-card.js').cardContent>} content
- * @param {{words: string, numbers: string, inputs: string, sources: string, demo: string, key: string}} titles
+ * @param {{words: string, numbers: string, inputs: string, sources: string, demo: string}} titles
  * @param {SVGSVGElement} drawing the drawn slope, as it stands on the page
  * @returns {Promise<Blob|null>}
  */
@@ -61,7 +61,7 @@ function paint(pen, content, titles, drawing) {
   text(content.headline, size, { weight: 600, family: HEAD, after: 0 });
   text(content.reason, 36);
   y += paintDrawing(pen, drawing, EDGE, y, wide);
-  text(titles.key, 26);
+  text(content.ways, 26);
   if (content.steep) {
     paintSign(pen, EDGE, y + 8, 84);
     const top = y;
@@ -98,7 +98,7 @@ function paintDrawing(pen, drawing, x, y, wide) {
   pen.clip();
   for (const node of drawing.querySelectorAll('path, text')) {
     const style = getComputedStyle(node);
-    if (node.hidden || style.display === 'none') continue;
+    if (style.display === 'none') continue;
     const path = node.tagName === 'path' ? node.getAttribute('d') && new Path2D(node.getAttribute('d')) : null;
     if (node.tagName === 'path' && !path) continue;
     pen.lineWidth = parseFloat(style.strokeWidth);

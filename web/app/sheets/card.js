@@ -9,7 +9,7 @@ import { t } from '../text.js';
 import { cardContent } from '../views/pitch-card.js';
 import { headlinePieces } from '../views/pitch-headline.js';
 import { LONGEST_NAME, pitchLink } from '../views/pitch-link.js';
-import { wayKey } from '../views/pitch-picture.js';
+import { createWayKey } from '../views/pitch-picture.js';
 import { profileLabel, shownProfile } from '../views/pitch-shown.js';
 import { pitchOf } from '../views/pitch-state.js';
 import { emsWide } from '../views/turn-verdict.js';
@@ -24,6 +24,7 @@ export function createCardSheet(store) {
   const says = el('p', { class: 'card-says' });
   const profile = createProfile(false);
   const drawing = el('div', { class: 'card-drawing' }, profile.node);
+  const key = createWayKey();
   const cautions = el('div', { class: 'card-cautions' });
   const sentences = el('ol', { class: 'card-sentences' });
   const numbers = el('dl', { class: 'card-numbers' });
@@ -31,7 +32,7 @@ export function createCardSheet(store) {
   const sources = el('ul');
   const date = el('p', { class: 'card-date' });
   const part = (key, ...content) => el('section', { class: `card-part card-${key}` }, el('h3', { text: t(`card.${key}`) }), ...content);
-  const page = el('article', { class: 'card-page' }, name, demo, old, word, says, drawing, wayKey(), cautions,
+  const page = el('article', { class: 'card-page' }, name, demo, old, word, says, drawing, key.node, cautions,
     part('words', sentences), part('numbers', numbers), part('inputs', inputs), part('sources', sources), date);
   const field = el('input', {
     type: 'text', class: 'card-field', id: 'card-name-field', maxlength: LONGEST_NAME, autocomplete: 'off',
@@ -55,14 +56,13 @@ export function createCardSheet(store) {
   function draw() {
     if (!drawn || !drawing.clientWidth) return;
     const em = parseFloat(getComputedStyle(drawing).fontSize);
-    // The drawing's shape is the slope's, within bounds, so that print and image keep it.
     profile.update(shownProfile(drawn.answer, drawn.units), { width: drawing.clientWidth, height: drawing.clientHeight, em });
   }
   new ResizeObserver(draw).observe(drawing);
 
   async function shareImage() {
     try {
-      const titles = Object.fromEntries(['words', 'numbers', 'inputs', 'sources', 'key'].map((key) => [key, t(`card.${key}`)]));
+      const titles = Object.fromEntries(['words', 'numbers', 'inputs', 'sources'].map((key) => [key, t(`card.${key}`)]));
       const blob = await cardImage(content, { ...titles, demo: t('pitch.demo.card') }, profile.node);
       const file = new File([blob], `${t('card.file')}.png`, { type: 'image/png' });
       if (navigator.canShare?.({ files: [file] })) {
@@ -116,6 +116,7 @@ export function createCardSheet(store) {
       word.replaceChildren(...headlinePieces(answer, state.units).map(({ text, key }) => el('span', { text, 'data-answer': key ?? null })));
       word.style.setProperty('--ems', emsWide(content.headline).toFixed(2));
       setText(says, content.reason);
+      key.update(answer, state.units);
       sentences.replaceChildren(...content.sentences.map((text) => el('li', { text })));
       numbers.replaceChildren(...content.numbers.map(([label, value]) => el('div', {}, el('dt', { text: label }), el('dd', { text: value }))));
       cautions.replaceChildren(...content.cautions.map((text, i) => el('p', {}, i === 1 ? sign() : null, el('span', { text }))));

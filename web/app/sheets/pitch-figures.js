@@ -71,9 +71,11 @@ function createLeg() {
       stand.update(leg, at, units);
       putMargin(margin.pieces, leg.standing.grip_margin, `${at}.standing.grip_margin`);
       const { low, high } = leg.standing.washes_out_above_deg;
-      put(washes.pieces[0], low === null ? t('pitch.figures.washesNever') : down('pitch', low, units, high !== null), `${at}.standing.washes_out_above_deg.low`);
-      put(washes.pieces[1], low === null ? '' : high === null ? ` ${t('figure.window.to')} ` : '–');
-      put(washes.pieces[2], low === null ? '' : high === null ? t('pitch.figures.washesNever') : up('pitch', high, units), `${at}.standing.washes_out_above_deg.high`);
+      const open = low !== null && high === null;
+      put(washes.pieces[0], low === null ? t('pitch.figures.washesNever') : open
+        ? t('pitch.figures.washesFrom', { pitch: down('pitch', low, units) }) : down('pitch', low, units, true), `${at}.standing.washes_out_above_deg.low`);
+      put(washes.pieces[1], high === null ? '' : '–');
+      put(washes.pieces[2], high === null ? '' : up('pitch', high, units), high && `${at}.standing.washes_out_above_deg.high`);
       const slip = leg.standing.sideslip_deg;
       put(sideslip.pieces[0], slip ? show('angle', slip.min, units) : t('pitch.figures.sideslipNone'), slip && `${at}.standing.sideslip_deg.min`);
       put(sideslip.pieces[1], slip ? ` ${t('figure.window.to')} ` : '');
@@ -157,8 +159,8 @@ export function createPitchFiguresSheet() {
     bodyRows.forEach((tr, i) => {
       const at = answer.sweep.pitch_deg.indexOf(TABLE_DEG[i]);
       setText(tr.children[0], show('pitch', TABLE_DEG[i], units));
-      answer.sweep.levels.forEach(({ end_speed_mps }, j) => {
-        put(tr.children[j + 1], formatNumber(speed.show(end_speed_mps[at])), `sweep.levels.${j}.end_speed_mps.${at}`);
+      answer.sweep.levels.forEach(({ foot_speed_mps }, j) => {
+        put(tr.children[j + 1], formatNumber(speed.show(foot_speed_mps[at])), `sweep.levels.${j}.foot_speed_mps.${at}`);
       });
     });
     draw();

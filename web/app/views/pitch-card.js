@@ -4,13 +4,13 @@ import { formatNumber, locale, t } from '../text.js';
 import { show } from '../units.js';
 import { marginText } from './pitch-figures.js';
 import { headlinePieces } from './pitch-headline.js';
-import { down, fromTo, pitchText, reason, sentenceText } from './pitch-words.js';
+import { down, fromTo, pitchText, reason, sentenceText, wayText } from './pitch-words.js';
 import { pitchOf } from './pitch-state.js';
 
 /**
  * @param {any} state
  * @returns {{name: string, demo: boolean, headline: string, reason: string, sentences: string[],
- *   numbers: [string, string][], inputs: string, cautions: string[], steep: boolean, sources: string[],
+ *   ways: string, numbers: [string, string][], inputs: string, cautions: string[], steep: boolean, sources: string[],
  *   date: string}}
  */
 export function cardContent(state) {
@@ -23,6 +23,7 @@ export function cardContent(state) {
     headline: headlinePieces(answer, units).map(({ text }) => text).join(''),
     reason: reason(answer, units),
     sentences: answer.sentences.map((sentence) => sentenceText(sentence, units)),
+    ways: `${t('card.key')} ${answer.levels.map((level) => wayText(level, units)).join('; ')}.`,
     numbers: numbers(answer, units),
     inputs: inputs(question, answer, units),
     cautions: [t('caution.1'), ...(answer.cautions.includes('avalanche') ? [t('caution.2')] : [])],
@@ -43,7 +44,7 @@ function numbers(answer, units) {
     ['card.margin', standing.grip_margin.low === null ? '–'
       : `${margins[0] === margins[1] ? margins[0] : t('pitch.fromTo', { from: margins[0], to: margins[1] })}\u202f${t('unit.percent')}`],
     ['card.washes', washes.low === null ? t('pitch.figures.washesNever') : washes.high === null
-      ? t('pitch.fromTo', { from: down('pitch', washes.low, units), to: t('pitch.figures.washesNever') })
+      ? t('pitch.figures.washesFrom', { pitch: down('pitch', washes.low, units) })
       : fromTo('pitch', washes.low, washes.high, units)],
     ['card.slide', t(`card.slide.${band.stops}`, {
       distance: near === null || far === null ? '' : fromTo('slope', near, far, units),
@@ -51,7 +52,7 @@ function numbers(answer, units) {
     })],
     ['card.end', fromTo('speed', band.end_speed_mps.low, band.end_speed_mps.high, units)],
     ['card.top', fromTo('speed', band.top_speed_mps.low, band.top_speed_mps.high, units)],
-    ['card.cannot', fromTo('pitch', stopping.cannot_stop_above_deg.low, stopping.cannot_stop_above_deg.high, units)],
+    ['card.cannot', t('card.cannot.value', { pitch: fromTo('pitch', stopping.cannot_stop_above_deg.low, stopping.cannot_stop_above_deg.high, units) })],
   ].map(([key, value]) => [t(key), value]);
   if (fall.speed_mps > 0) {
     const { low, high } = stopping.band_m;

@@ -10,7 +10,7 @@ const SETTLED_MS = 900;
 
 export function createHeadline() {
   const parts = [el('span'), el('span'), el('span'), el('span'), el('span')];
-  const word = el('p', { class: 'verdict-word', role: 'heading', 'aria-level': '2' }, ...parts);
+  const word = el('h2', { class: 'verdict-word' }, el('span', {}, ...parts));
   const says = el('p', { class: 'says' });
   const live = el('p', { class: 'visually-hidden', 'aria-live': 'polite' });
   const node = el('div', { class: 'verdict' }, word, el('span', { class: 'verdict-stroke', 'aria-hidden': 'true' }), says, live);

@@ -25,12 +25,12 @@ export function createLegs(store, { onMore }) {
     const long = el('span', { class: 'leg-long' });
     return { number, steep, long, node: el('button', { type: 'button', class: 'leg', on: { click: () => store.set({ pitch: { selected: index } }) } }, number, steep, ' ', long) };
   });
-  const add = el('button', { type: 'button', class: 'leg leg-add', 'aria-label': t('pitch.leg.add'), text: '+', on: { click: added } });
+  const add = el('button', { type: 'button', class: 'plain-button', text: t('pitch.leg.add'), on: { click: added } });
   const own = el('button', { type: 'button', class: 'own', text: t('pitch.own'), on: { click: startOwn } });
-  const more = el('button', { type: 'button', class: 'leg-more', 'aria-haspopup': 'dialog', on: { click: onMore } });
+  const more = el('button', { type: 'button', class: 'plain-button', 'aria-haspopup': 'dialog', on: { click: onMore } });
   const numbers = NUMBERS.map((given) => ({ by: given.by, control: legNumber(store, given) }));
-  const list = el('div', { class: 'legs', role: 'group', 'aria-label': t('pitch.legs') }, ...tabs.map(({ node }) => node), add);
-  const node = el('div', { class: 'profile-entry' }, own, list, ...numbers.map(({ control }) => control.node), more);
+  const list = el('div', { class: 'legs', role: 'group', 'aria-label': t('pitch.legs') }, ...tabs.map(({ node }) => node));
+  const node = el('div', { class: 'profile-entry' }, own, list, ...numbers.map(({ control }) => control.node), el('div', { class: 'leg-row' }, more, add));
 
   function added() {
     const pitch = pitchOf(store.get());
@@ -63,7 +63,7 @@ export function createLegs(store, { onMore }) {
     const { index, leg } = selectedLeg(pitch);
     tabs.forEach((tab, i) => {
       const one = pitch.legs[i];
-      setShown(tab.node, Boolean(one) && pitch.legs.length > 1);
+      setShown(tab.node, Boolean(one));
       if (!one) return;
       const wrong = errors.some(({ field }) => field.startsWith(`legs[${i}].`));
       setText(tab.steep, legValue(one.by, one.value, state.units));
@@ -73,6 +73,7 @@ export function createLegs(store, { onMore }) {
       setAttribute(tab.node, 'aria-pressed', String(i === index));
       setAttribute(tab.node, 'data-wrong', wrong);
     });
+    setShown(list, pitch.legs.length > 1);
     setShown(add, pitch.legs.length < MOST_LEGS);
     setShown(own, pitch.demo);
     setText(more, pitch.legs.length > 1 ? t('pitch.leg.moreShort', { leg: index + 1 }) : t('pitch.leg.moreOne'));

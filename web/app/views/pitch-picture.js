@@ -4,8 +4,8 @@ import { el, setAttribute, setAttributes, setText, svg } from '../dom.js';
 import { createProfile, WAYS } from '../pictures/profile.js';
 import { t } from '../text.js';
 import { show } from '../units.js';
-import { pitchText } from './pitch-words.js';
 import { profileLabel, shownProfile } from './pitch-shown.js';
+import { pitchText, wayText } from './pitch-words.js';
 
 /** @param {{onPick: (place: number) => void, onSettled: () => void}} given `onPick`: m along the slope */
 export function createPitchPicture({ onPick, onSettled }) {
@@ -16,7 +16,8 @@ export function createPitchPicture({ onPick, onSettled }) {
   }, profile.node);
   const words = el('p', { class: 'visually-hidden' });
   const captionText = el('p', { class: 'caption' });
-  const node = el('div', { class: 'pictures one' }, scrub, words, wayKey(), captionText);
+  const key = createWayKey();
+  const node = el('div', { class: 'pictures one' }, scrub, words, key.node, captionText);
 
   let drawn = null;
   let size = null;
@@ -74,6 +75,7 @@ export function createPitchPicture({ onPick, onSettled }) {
       draw();
       const { answer, units } = next;
       const { at_m: place, leg } = answer.fall;
+      key.update(answer, units);
       setText(words, profileLabel(answer, units));
       setAttributes(scrub, {
         'aria-valuemin': 0, 'aria-valuemax': Math.floor(length()), 'aria-valuenow': Math.round(place),
@@ -85,9 +87,19 @@ export function createPitchPicture({ onPick, onSettled }) {
   };
 }
 
-/** Which line is which. */
-export function wayKey() {
-  return el('ul', { class: 'way-key' }, ...WAYS.map((way) => el('li', {},
+/** Which line is which, and where each slide ends. */
+export function createWayKey() {
+  const figures = WAYS.map(() => el('span'));
+  const node = el('ul', { class: 'way-key', 'aria-label': t('pitch.key') }, ...WAYS.map((way, i) => el('li', {},
     svg('svg', { class: 'profile way-sample', viewBox: '0 0 34 10', 'aria-hidden': 'true', focusable: 'false' },
-      svg('path', { class: way, d: 'M0 5H34' })), ' ', t('pitch.key', { clothing: t(`pitch.clothing.${way}`) }))));
+      svg('path', { class: way, d: 'M0 5H34' })), ' ', figures[i])));
+  return {
+    node,
+    update(answer, units) {
+      answer.levels.forEach((level, i) => {
+        setText(figures[i], wayText(level, units));
+        setAttribute(figures[i], 'data-answer', `levels.${i}.${level.stops ? 'distance_m' : 'end_speed_mps'}`);
+      });
+    },
+  };
 }

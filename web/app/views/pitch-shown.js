@@ -3,31 +3,26 @@
 import { WAYS } from '../pictures/profile.js';
 import { formatNumber, t } from '../text.js';
 import { show, unitOf } from '../units.js';
-import { pitchText, up, down } from './pitch-words.js';
+import { fromTo, pitchText } from './pitch-words.js';
 
 /**
  * @param {any} answer
  * @param {import('../units.js').Units} units
  */
 export function shownProfile(answer, units) {
-  const number = (kind, value) => formatNumber(unitOf(kind, units).show(value));
   return {
     profile: answer.profile,
     legs: answer.legs.map(({ start_m, end_m, pitch_deg, length_m }) => {
       const steep = (pitch_deg < 0 ? '↗' : '') + pitchText(pitch_deg, units);
       return { start_m, end_m, short: steep, text: `${steep}  ${show('slope', length_m, units)}` };
     }),
-    fall: { at_m: answer.fall.at_m, text: `${t('pitch.picture.fall')} ${show('speed', answer.fall.speed_mps, units)}` },
-    halts: answer.levels.filter(({ stops }) => stops).map(({ clothing, stops_at_m, distance_m }) => ({
-      way: clothing, at_m: stops_at_m,
-      text: `${t('pitch.picture.stops', { clothing: t(`pitch.clothing.${clothing}`) })} ${show('slope', distance_m, units)}`,
-    })),
+    fall: { at_m: answer.fall.at_m, text: t('pitch.picture.fall') },
+    halts: answer.levels.filter(({ stops }) => stops).map(({ stops_at_m }) => stops_at_m),
     asks: !answer.levels.some(({ friction }) => friction === answer.slide.friction),
     speedText(slow, fast, last) {
-      const high = last ? up('speed', fast, units) : number('speed', fast);
-      const low = number('speed', slow ?? 0);
-      return slow === null ? `≤\u202f${high}` : low === number('speed', fast) ? high
-        : `${last ? down('speed', slow, units, true) : low}–${high}`;
+      if (last) return fromTo('speed', slow, fast, units);
+      const [low, high] = [slow, fast].map((speed) => formatNumber(unitOf('speed', units).show(speed)));
+      return low === high ? high : `${low}–${high}`;
     },
     rules: [1, 2, 5, 10, 20, 50, 100, 200, 500, 1000, 2000, 5000, 10000].map((length) => ({
       length_m: unitOf('slope', units).read(length), text: show('slope', unitOf('slope', units).read(length), units),

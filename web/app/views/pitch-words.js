@@ -99,7 +99,7 @@ export function headline(answer, units) {
 export function reason(answer, units) {
   const { band } = answer;
   const back = band.may_slide_back && band.stops !== 'none' ? ` ${t('pitch.slide.back')}` : '';
-  const fall = t('pitch.reason.fall', {
+  const fall = t(answer.fall.at_m === 0 ? 'pitch.reason.fallTop' : 'pitch.reason.fall', {
     speed: show('speed', answer.fall.speed_mps, units), place: show('slope', answer.fall.at_m, units),
   });
   if (answer.sentences[1].code === 'slide_stays') return t('pitch.reason.stays');
@@ -109,4 +109,11 @@ export function reason(answer, units) {
     end: fromTo('speed', band.end_speed_mps.low, band.end_speed_mps.high, units),
     top: fromTo('speed', band.top_speed_mps.low, band.top_speed_mps.high, units),
   }) + back;
+}
+
+/** Where the slide in one clothing ends, in a few words. */
+export function wayText({ clothing, stops, distance_m, end_speed_mps }, units) {
+  return t(stops ? 'pitch.key.stops' : 'pitch.key.runs', {
+    clothing: t(`pitch.clothing.${clothing}`), distance: show('slope', distance_m, units), speed: show('speed', end_speed_mps, units),
+  });
 }

@@ -33,7 +33,8 @@ export function createPitchView(host, { store, engine }) {
   const notice = el('p', { class: 'notice', role: 'alert', hidden: true });
   const legSheet = createPitchLegSheet(store);
   const legs = createLegs(store, { onMore: () => { legSheet.open(); render(); } });
-  const speed = ownNumber(store, { key: 'speed_mps', text: 'fall_speed', kind: 'speed', span: [0, 25] });
+  const speed = ownNumber(store, { key: 'speed_mps', text: 'fall_speed', kind: 'speed', span: [0, 25],
+    aside: el('span', { text: t('pitch.speed.note') }) });
   const snowSheet = createSnowSheet(store, null, 'pitch-snow');
   const riderSheet = createPitchRiderSheet(store);
   const figuresSheet = createPitchFiguresSheet();
