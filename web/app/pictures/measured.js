@@ -8,7 +8,7 @@ import { el } from '../dom.js';
  * @param {(size: {width: number, height: number, em: number}) => void} draw
  */
 export function createMeasured(name, svgNode, draw) {
-  const node = el('div', { class: `measured ${name}` }, svgNode);
+  const node = el('div', { class: `sized ${name}` }, svgNode);
   let size = null;
   new ResizeObserver(() => {
     if (!node.clientWidth) return;

@@ -22,21 +22,21 @@ export function createRunPicture() {
   const text = (name) => svg('text', { class: `label ${name}` });
   const parts = { fails: part('fails-at'), gone: part('gone'), marginal: part('marginal'), holds: part('holds') };
   const mark = { ring: svg('circle', { class: 'mark', r: 8 }), label: text('') };
-  const strips = STRIPS.map(({ name }) => ({ name, frame: part('frame'), zero: part('zero'), curve: part('curve'), low: text('small'), high: text('small'), title: text('') }));
+  const strips = STRIPS.map(({ name }) => ({ name, frame: part('frame'), zero: part('zero'), curve: part('curve'), span: text('small'), unit: text('small'), title: text('') }));
   const pathTitle = text('');
   const node = svg('svg', { class: 'above run-picture', role: 'img', focusable: 'false' }, ...Object.values(parts), mark.ring, pathTitle,
-    ...strips.flatMap(({ frame, zero, curve, low, high, title }) => [frame, zero, curve, low, high, title]), mark.label);
+    ...strips.flatMap(({ frame, zero, curve, span, unit, title }) => [frame, zero, curve, span, unit, title]), mark.label);
 
   /**
    * @param {object} shown
    * @param {any} shown.path the answer's
    * @param {{x_m: number, y_m: number}|null} shown.fails
-   * @param {{path: string, fails: string, titles: Record<string, string>, spans: Record<string, [string, string]>}} shown.words
+   * @param {{path: string, fails: string, titles: Record<string, string>, spans: Record<string, string>, units: Record<string, string>}} shown.words
    * @param {{width: number, height: number, em: number}} size px
    */
   function update({ path, fails, words }, { width, height, em }) {
     setAttribute(node, 'viewBox', `0 0 ${width} ${height}`);
-    const top = em * 2.9;
+    const top = em * 4.1;
     const bottom = height - 10;
     const pathWide = width * 0.3;
     const [x0, x1] = [Math.min(...path.x_m), Math.max(...path.x_m)];
@@ -74,8 +74,8 @@ export function createRunPicture() {
       setAttribute(strip.zero, 'd', name === 'margin' ? line([across(0), top], [across(0), y(y1)]) : null);
       setAttribute(strip.curve, 'd', broken(values.map((value, j) => value === null ? null : [across(value), points[j][1]])));
       put(strip.title, words.titles[name], left, em * 0.95, 'start');
-      put(strip.low, words.spans[name][0], left, em * 2.2, 'start');
-      put(strip.high, words.spans[name][1], left + wide, em * 2.2, 'end');
+      put(strip.span, words.spans[name], left, em * 2.15, 'start');
+      put(strip.unit, words.units[name], left, em * 3.35, 'start');
     });
   }
 
@@ -86,7 +86,7 @@ export function createRunPicture() {
 export function runHeight(path, width) {
   const across = Math.max(...path.x_m) - Math.min(...path.x_m) || 1;
   const down = Math.max(...path.y_m) - Math.min(...path.y_m);
-  return Math.max(200, Math.min(520, ((width * 0.3 - 24) / across) * down + 50));
+  return Math.max(140, Math.min(520, ((width * 0.3 - 24) / across) * down + 85));
 }
 
 /** A line with gaps where there is no point. */

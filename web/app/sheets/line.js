@@ -40,6 +40,8 @@ export function createLineSheet({ store, echo }) {
     const figure = createFigure(kind, { signed: kind === 'share' });
     return { figure, key, driftKey, node: el('div', { class: 'row' }, el('dt', { text: t(label) }), el('dd', {}, figure.node)) };
   });
+  /** What only a drifting board has. */
+  const drifting = rows.filter(({ driftKey }) => ['drift_angle_deg', 'groove_width_m', 'least_edge_angle_deg'].includes(driftKey));
   const list = el('dl', { class: 'rows' }, ...rows.map(({ node }) => node));
   const sign = drawWarningSign();
   const catchText = el('span');
@@ -77,7 +79,7 @@ export function createLineSheet({ store, echo }) {
       start.update(state, errors);
       if (!kept) return;
       const { answer } = kept;
-      const offered = answer.drift && answer.verdict !== 'holds' && Math.abs((inputs.line_radius_m ?? 0) - answer.drift.line_radius_m) > 0.01;
+      const offered = answer.drift && !['holds', 'too_slow'].includes(answer.verdict) && Math.abs((inputs.line_radius_m ?? 0) - answer.drift.line_radius_m) > 0.01;
       setShown(offer, Boolean(offered));
       if (offered) setText(offer, t('line.offer', { radius: show('length', answer.drift.line_radius_m, units) }));
 
@@ -89,8 +91,9 @@ export function createLineSheet({ store, echo }) {
       const worst = drifts ? answer.drift.phase_deg : answer.worst.phase_deg;
       const index = answer.phase_deg.indexOf(worst);
       setShown(list, drifts || answer.worst.lean_deg !== null);
-      setText(title, list.hidden ? t('line.none') : t(drifts ? 'line.figures.tightest' : 'line.figures', { phase: show('angle', worst, units) }));
+      setText(title, list.hidden ? t('line.none', { phase: show('angle', worst, units), state: t(`state.${answer.worst.state}`) }) : t(drifts ? 'line.figures.tightest' : 'line.figures', { phase: show('angle', worst, units) }));
       for (const { figure, key, driftKey } of rows) figure.update(answer, drifts ? `drift.${driftKey}` : `${key}.${index}`, units);
+      for (const { node } of drifting) setShown(node, drifts || onLine);
       sayCatch(answer, onLine, units);
       shape.update(answer.picture.path_m);
       setAttribute(shape.node, 'aria-label', t('line.shape.label', { from: show('angle', answer.phase_deg[0], units) }));

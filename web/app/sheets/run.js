@@ -4,8 +4,8 @@ import { el, setAttribute, setShown, setText } from '../dom.js';
 import { createFigure } from '../figure.js';
 import { createMeasured } from '../pictures/measured.js';
 import { createRunPicture, runHeight, STRIPS } from '../pictures/run.js';
-import { t } from '../text.js';
-import { show } from '../units.js';
+import { formatNumber, t } from '../text.js';
+import { show, symbol, unitOf } from '../units.js';
 import { createRunSetup, runQuestion } from './run-setup.js';
 import { createSheet } from './sheet.js';
 
@@ -64,10 +64,11 @@ export function createRunSheet({ store, engine, onChange }) {
   function draw(size) {
     if (!answer) return;
     const { path, fails_at: fails } = answer;
-    const spans = spansOf(path, units);
     picture.update({ path, fails, words: {
       path: t('run.path'), fails: fails ? t(`state.${fails.state}`) : '',
-      titles: Object.fromEntries(STRIPS.map(({ name }) => [name, t(`run.${name}`)])), spans,
+      titles: Object.fromEntries(STRIPS.map(({ name }) => [name, t(`run.${name}`)])),
+      spans: spansOf(path, units, true),
+      units: Object.fromEntries(STRIPS.map(({ name, kind }) => [name, symbol(unitOf(kind, units)).trim()])),
     } }, size);
   }
 
@@ -96,30 +97,31 @@ export function createRunSheet({ store, engine, onChange }) {
       if (end === 'stops') sentences.push(t('run.stops'));
       setText(why, sentences.join(' '));
       const steep = legs?.find((leg) => leg.no_speed_carves);
-      setShown(noSpeed, Boolean(steep));
-      setShown(noSpeedWhy, Boolean(steep));
       if (steep) setText(noSpeed, legs.length > 1 ? t('run.noSpeed.leg', { pitch: show('pitch', steep.pitch_deg, units) }) : t('run.noSpeed'));
       const carves = state.inputs.line_radius_m === null;
+      for (const one of [noSpeed, noSpeedWhy]) setShown(one, carves && Boolean(steep));
       line = carves ? kept?.answer.drift?.line_radius_m ?? null : null;
       setShown(drift, !carves || line !== null);
       setText(drift, carves ? t('run.drift', { radius: show('length', line, units) }) : t('run.carve'));
       setShown(friction, answer.cautions.includes('drift_friction'));
       for (const { figure, key } of rows) figure.update(answer, key, units);
       const spans = spansOf(answer.path, units);
-      const span = (name) => t('run.picture.span', { from: spans[name][0], to: spans[name][1] });
       setAttribute(picture.node, 'aria-label', t('run.picture.label', {
-        fails: `${word.textContent}.`, speed: span('speed'), load: span('load'), lean: span('lean'), margin: span('margin') }));
+        fails: `${word.textContent}.`, ...spans }));
       box.node.style.height = `${runHeight(answer.path, box.node.clientWidth || 330)}px`;
       box.redraw();
     },
   };
 }
 
-/** Least and most of each strip, in words. */
-function spansOf(path, units) {
+/** Least and most of each strip, in words; `bare`: without the unit. */
+function spansOf(path, units, bare = false) {
   return Object.fromEntries(STRIPS.map(({ name, key, kind }) => {
     const known = path[key].filter((value) => value !== null);
-    const text = (value) => (known.length ? show(kind, value, units, { signed: kind === 'share' }) : '–');
-    return [name, [text(Math.min(...known)), text(Math.max(...known))]];
+    if (!known.length) return [name, '–'];
+    const unit = unitOf(kind, units);
+    const decimals = Math.min(1, unit.decimals);
+    const [from, to] = [Math.min(...known), Math.max(...known)].map((value) => formatNumber(unit.show(value), { decimals }));
+    return [name, from === to ? from : t(bare ? 'run.picture.bare' : 'run.picture.span', { from, to }) + (bare ? '' : symbol(unit))];
   }));
 }

@@ -1,7 +1,6 @@
 /** English: what is one tap behind the Turn view. Keys as in en.js. */
 export const enTurnMore = {
   'unit.inHundred': 'in 100',
-  'unit.s': 's',
   'unit.none': '',
 
   'figure.chance': 'Holds',
@@ -129,7 +128,7 @@ export const enTurnMore = {
     'and the margin says little.',
   'line.figures': 'Where the margin is least, at {phase} of the turn',
   'line.figures.tightest': 'On the tightest line that holds, at {phase} of the turn',
-  'line.none': 'No balance anywhere on this line.',
+  'line.none': 'No balance at {phase} of the turn: {state}.',
   'figure.leastEdge': 'Least edge angle that holds',
   'figure.driftAngle': 'Board drifts by',
   'figure.groove': 'Groove width',
@@ -179,6 +178,7 @@ export const enTurnMore = {
     'The run from above, down the page, with speed, load, lean and margin beside it. {fails} Speed ' +
     '{speed}, load {load}, lean {lean}, margin {margin}.',
   'run.picture.span': '{from} to {to}',
+  'run.picture.bare': '{from}…{to}',
   'run.path': 'path',
   'run.speed': 'speed',
   'run.load': 'load',
