@@ -56,7 +56,7 @@ def test_axe_finds_nothing_on_the_page(turn, look, verdict):
     set_typed(turn, pitch_deg=pitch, speed_mps=speed)
     expect(turn.locator(f"[data-verdict={verdict}]")).to_have_count(1)
     enhanced = ("color-contrast-enhanced",) if look == "glare" else ()
-    assert violations(turn, *enhanced, "target-size") == []
+    assert violations(turn, *enhanced) == []
 
 
 @pytest.mark.parametrize("look", LOOKS)
@@ -138,12 +138,15 @@ def test_nothing_needs_sideways_scrolling(turn, size, look, percent):
 def test_the_answer_is_there_without_scrolling(turn, size):
     turn.set_viewport_size({"width": size[0], "height": size[1]})
     turn.evaluate("scrollTo(0, 0)")
+    # The way between the views covers the foot of a high screen.
+    nav = turn.locator("nav").bounding_box() if turn.locator("nav").is_visible() else None
+    foot = nav["y"] if nav and nav["y"] > 0 else size[1]
     for part in (".verdict-word", ".says", ".figures", ".section", ".scrub"):
         box = turn.locator(part).bounding_box()
-        assert box and box["y"] >= 0 and box["y"] + box["height"] <= size[1], part
+        assert box and box["y"] >= 0 and box["y"] + box["height"] <= foot, part
     for part in (".number >> nth=0", ".number >> nth=1", ".number >> nth=2"):
         box = turn.locator(part).bounding_box()
-        assert box and box["y"] + 48 <= size[1], part
+        assert box and box["y"] + 16 <= foot, part
     turn.set_viewport_size(PHONE["viewport"])
 
 

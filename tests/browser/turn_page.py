@@ -47,13 +47,17 @@ def expected(answer: dict[str, Any], key: str, units: dict[str, Any] = METRIC) -
         return VERDICTS[value]
     if value is None:
         return "–"
-    name = [part for part in key.split(".") if not part.isdigit()][-1]
-    factor, decimals, symbol = units[name]
+    factor, decimals, symbol = units[name_of(key)]
     # ECMA-402 rounds halves away from zero.
     number = Decimal(value * factor).quantize(Decimal(1).scaleb(-decimals), ROUND_HALF_UP)
     sign = "+" if name == "grip_margin" and number > 0 else ""
     text = f"{sign}{number}" if number else f"{abs(number)}"
     return text.replace("-", "−") + symbol
+
+
+def name_of(key: str) -> str:
+    """Last part of a dotted key that is a name."""
+    return next(part for part in reversed(key.split(".")) if not part.isdigit())
 
 
 def plain(text: str) -> str:
@@ -93,9 +97,9 @@ def nudge(page: Page, name: str, direction: str) -> Locator:
 
 
 def shows(page: Page, asked: dict[str, Any], units: dict[str, Any] = METRIC) -> int:
-    """Wait until every figure in sight is the engine's answer; gives how many there are.
+    """Wait until every figure of the turn in sight is the engine's answer; gives how many there are.
 
-    A speed may stand without its unit beside the input that has it.
+    Chances and what to change have tests of their own. A speed may stand without its unit beside the input that has it.
     """
     answer = snowhold.answer(asked)
 
@@ -103,6 +107,7 @@ def shows(page: Page, asked: dict[str, Any], units: dict[str, Any] = METRIC) -> 
         found = page.evaluate("""() => [...document.querySelectorAll('[data-answer]')]
             .filter((node) => node.checkVisibility())
             .map((node) => [node.dataset.answer, node.textContent])""")
+        found = [(key, text) for key, text in found if key == "verdict" or name_of(key) in units]
         figures.extend(found)
         return [f"{key}: {text}, not {expected(answer, key, units)}" for key, text in found
                 if plain(text) not in (expected(answer, key, units),

@@ -4,8 +4,8 @@ export const enTurnMore = {
   'unit.none': '',
 
   'figure.chance': 'Holds',
-  'figure.chance.label': 'How sure: it holds {chance}. Opens how well you know this',
-  'figure.chance.none': 'How sure: not computed yet. Opens how well you know this',
+  'figure.chance.label': 'Holds {chance}: how sure, and how well you know this',
+  'figure.chance.none': 'Holds – in 100: not computed yet',
 
   // The best change, beside the reason; {cost} is how much, {to} what it becomes.
   'fix.speed_mps.less': 'Holds {cost} slower.',
