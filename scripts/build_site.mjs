@@ -10,7 +10,8 @@ const root = path.resolve(import.meta.dirname, '..');
 // build_site.mjs [SOURCES [RESULT]]: the tests build a second version from changed sources.
 const web = path.resolve(process.argv[2] ?? path.join(root, 'web'));
 const target = path.resolve(process.argv[3] ?? path.join(web, 'dist'));
-const runtime = path.join(root, '.cache/runtime');
+const runtime = path.join(root, '.cache/runtime'); // as it was released
+const trimmed = path.join(root, '.cache/trimmed'); // what of it is shipped smaller
 const out = `${target}.new`;
 const esbuild = createRequire(path.join(web, 'package.json'))('esbuild');
 
@@ -48,12 +49,16 @@ function placeRuntime() {
   const wheels = path.join(root, '.cache/wheel');
   const wheel = fs.readdirSync(wheels).find((name) => name.endsWith('.whl'));
   const lock = JSON.parse(fs.readFileSync(path.join(runtime, 'pyodide-lock.json'), 'utf8'));
-  const numpy = lock.packages.numpy.file_name;
-  lock.packages = { numpy: lock.packages.numpy };
-  const files = { 'pyodide-lock.json': Buffer.from(JSON.stringify(lock)) };
-  for (const name of ['pyodide.asm.js', 'pyodide.asm.wasm', 'python_stdlib.zip', numpy]) {
+  const { numpy } = lock.packages;
+  const files = {};
+  for (const name of ['pyodide.asm.js', 'pyodide.asm.wasm']) {
     files[name] = fs.readFileSync(path.join(runtime, name));
   }
+  for (const name of ['python_stdlib.zip', numpy.file_name]) {
+    files[name] = fs.readFileSync(path.join(trimmed, name));
+  }
+  lock.packages = { numpy: { ...numpy, sha256: digest(files[numpy.file_name], 'sha256', 'hex') } };
+  files['pyodide-lock.json'] = Buffer.from(JSON.stringify(lock));
   files[wheel] = fs.readFileSync(path.join(wheels, wheel));
   const names = Object.keys(files).sort();
   const hash = digest(names.map((name) => `${name} ${digest(files[name], 'sha256', 'hex')}`).join('\n'),

@@ -67,7 +67,7 @@ build() {
     install_for_build
     [[ -e web/dist/index.html ]] || rm -f .cache/build.stamp
     once .cache/build.stamp \
-        "web package-python scripts/build_site.mjs scripts/headers.json scripts/runtime.sha256" \
+        "web package-python .cache/trimmed scripts/build_site.mjs scripts/headers.json" \
         build_site
 }
 
@@ -78,6 +78,13 @@ install_for_build() {
     once .venv/build.stamp scripts/requirements.txt pip_install scripts/requirements.txt
     once web/node_modules/.stamp "web/package.json web/package-lock.json" npm_install
     .venv/bin/python scripts/fetch_runtime.py
+    once .cache/trimmed/.stamp "scripts/trim_runtime.py scripts/trim_runtime.mjs scripts/runtime.sha256" \
+        trim_runtime
+}
+
+trim_runtime() {
+    say "trimming and compiling the runtime"
+    node scripts/trim_runtime.mjs
 }
 
 build_site() {

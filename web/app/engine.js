@@ -42,6 +42,7 @@ export function startEngine({ onState = () => {}, onArrays = () => {} } = {}) {
   const heard = {
     // The worker needs no network for this start.
     restoring() { startWatch = setTimeout(lost, PATIENCE_MS, 'the engine did not start'); },
+    afresh: () => clearTimeout(startWatch),
     ready() {
       clearTimeout(startWatch);
       tell('ready');

@@ -3,6 +3,7 @@
 // In:  {id, question}   question and answer are JSON texts
 // Out: {id, answer} | {id, failure}   one for each question
 //      {state: 'restoring'}   a start that needs no network has begun
+//      {state: 'afresh'}   it failed; a plain start has begun instead
 //      {state: 'ready'}   questions can be answered
 //      {state: 'arrays'}  numpy has joined: an answer may now say more
 //      {state: 'scalar', message}   numpy could not join: answers stay as they are
@@ -44,6 +45,7 @@ async function quickStart() {
     return pyodide;
   } catch (problem) {
     console.info(`starting afresh: ${problem.message}`);
+    self.postMessage({ state: 'afresh' });
     await dropSnapshot();
     return null;
   }
@@ -84,7 +86,7 @@ async function quiet() {
 }
 
 async function loadArrays(pyodide) {
-  await pyodide.loadPackage('numpy', { messageCallback() {}, checkIntegrity: false });
+  await pyodide.loadPackage('numpy', { messageCallback() {} });
   await quiet();
   pyodide.runPython('del sys.modules["numpy"]\nimport numpy');
   self.postMessage({ state: 'arrays' });
