@@ -1,8 +1,9 @@
 /** What is around every view: caution, settings, the way between views, ready for the hill. */
 
-import { el, setAttribute, setShown, setText, svg } from './dom.js';
+import { el, setAttribute, setShown, setText } from './dom.js';
 import { followLook } from './look.js';
 import { startOffline } from './offline.js';
+import { drawWarningSign } from './pictures/warning-sign.js';
 import { createCautionSheet } from './sheets/caution.js';
 import { createSettingsSheet } from './sheets/settings.js';
 import { formatNumber, language, t } from './text.js';
@@ -57,7 +58,7 @@ export function createShell(context) {
 /** The caution, always in view; from a slope that can slide on, with the warning sign. */
 function createHeader(caution, settings) {
   const text = el('span', { class: 'caution-text', text: t('caution.short') });
-  const warning = el('span', { class: 'caution-warning', hidden: true }, warningSign(), el('span', { text: t('caution.avalanche') }));
+  const warning = el('span', { class: 'caution-warning', hidden: true }, drawWarningSign(), el('span', { text: t('caution.avalanche') }));
   const node = document.querySelector('header');
   node.append(
     el('button', { type: 'button', class: 'caution', 'aria-haspopup': 'dialog', on: { click: caution.open } }, warning, text),
@@ -70,13 +71,6 @@ function createHeader(caution, settings) {
       setShown(warning, steep);
     },
   };
-}
-
-/** General warning sign of ISO 3864 / ISO 7010 W001: black on yellow, in every look. */
-function warningSign() {
-  return svg('svg', { class: 'warning-sign', viewBox: '0 0 100 90', role: 'img', 'aria-label': t('caution.sign') },
-    svg('path', { class: 'border', d: 'M50 4 97 86H3Z' }), svg('path', { class: 'field', d: 'M50 19 84 78H16Z' }),
-    svg('path', { class: 'mark', d: 'M45 36h10l-2 24h-6Z' }), svg('circle', { class: 'mark', cx: 50, cy: 69, r: 5 }));
 }
 
 /** Buttons to the views; hidden while there is one view alone. */

@@ -69,7 +69,7 @@ const KINDS = {
   dragArea: { m2: factor('unit.m2', 1, 2, 0.05) },
   hundred: { count: factor('unit.inHundred', 100, 0, 1) },
   fineAngle: { deg: factor('unit.deg', 1, 1, 1) },
-  time: { s: factor('unit.s', 1, 0, 1) },
+  time: { s: factor('unit.s', 1, 1, 1) },
   distance: { m: factor('unit.m', 1, 0, 10), ft: factor('unit.ft', 1 / 0.3048, 0, 10) },
   count: { one: factor('unit.none', 1, 0, 1) },
 };
