@@ -89,9 +89,8 @@ export const enPitch = {
 
   'pitch.legs': 'Legs of the slope, from the top',
   'pitch.leg': 'Leg {leg}',
-  'pitch.leg.text': '{steep} {length}',
-  'pitch.leg.name': 'Leg {leg}: {text}',
-  'pitch.leg.wrong': 'Leg {leg}: {text}; put right what is marked',
+  'pitch.leg.word': 'Leg',
+  'pitch.leg.wrong': 'put right what is marked',
   'pitch.leg.add': 'Add a leg',
   'pitch.leg.moreShort': 'More on leg {leg}',
   'pitch.leg.moreOne': 'Drop or percent',

@@ -23,7 +23,10 @@ export function createLegs(store, { onMore }) {
     const number = el('span', { class: 'leg-number', text: formatNumber(index + 1) });
     const steep = el('span', { class: 'leg-steep' });
     const long = el('span', { class: 'leg-long' });
-    return { number, steep, long, node: el('button', { type: 'button', class: 'leg', on: { click: () => store.set({ pitch: { selected: index } }) } }, number, steep, ' ', long) };
+    const fault = el('span', { class: 'visually-hidden' });
+    return { steep, long, fault, node: el('button', {
+      type: 'button', class: 'leg', on: { click: () => store.set({ pitch: { selected: index } }) },
+    }, el('span', { class: 'visually-hidden', text: t('pitch.leg.word') }), ' ', number, ' ', steep, ' ', long, fault) };
   });
   const add = el('button', { type: 'button', class: 'plain-button', text: t('pitch.leg.add'), on: { click: added } });
   const own = el('button', { type: 'button', class: 'own', text: t('pitch.own'), on: { click: startOwn } });
@@ -68,8 +71,7 @@ export function createLegs(store, { onMore }) {
       const wrong = errors.some(({ field }) => field.startsWith(`legs[${i}].`));
       setText(tab.steep, legValue(one.by, one.value, state.units));
       setText(tab.long, legValue('length_m', one.length_m, state.units) + (wrong ? ' !' : ''));
-      const text = `${tab.steep.textContent}, ${legValue('length_m', one.length_m, state.units)}`;
-      setAttribute(tab.node, 'aria-label', t(wrong ? 'pitch.leg.wrong' : 'pitch.leg.name', { leg: i + 1, text }));
+      setText(tab.fault, wrong ? ` ${t('pitch.leg.wrong')}` : '');
       setAttribute(tab.node, 'aria-pressed', String(i === index));
       setAttribute(tab.node, 'data-wrong', wrong);
     });
