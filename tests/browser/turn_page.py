@@ -47,7 +47,8 @@ def expected(answer: dict[str, Any], key: str, units: dict[str, Any] = METRIC) -
         return VERDICTS[value]
     if value is None:
         return "–"
-    factor, decimals, symbol = units[name_of(key)]
+    name = name_of(key)
+    factor, decimals, symbol = units[name]
     # ECMA-402 rounds halves away from zero.
     number = Decimal(value * factor).quantize(Decimal(1).scaleb(-decimals), ROUND_HALF_UP)
     sign = "+" if name == "grip_margin" and number > 0 else ""
@@ -97,9 +98,10 @@ def nudge(page: Page, name: str, direction: str) -> Locator:
 
 
 def shows(page: Page, asked: dict[str, Any], units: dict[str, Any] = METRIC) -> int:
-    """Wait until every figure of the turn in sight is the engine's answer; gives how many there are.
+    """Wait until the turn's figures in sight are the engine's answer; gives how many there are.
 
-    Chances and what to change have tests of their own. A speed may stand without its unit beside the input that has it.
+    Chances and what to change have tests of their own. A speed may stand without its unit beside
+    the input that has it.
     """
     answer = snowhold.answer(asked)
 

@@ -94,14 +94,14 @@ function createChance(onClick) {
   const figure = createFigure('bareHundred');
   const unit = el('span', { class: 'in-hundred', text: t('unit.inHundred') });
   const node = el('button', { type: 'button', class: 'chance', 'aria-haspopup': 'dialog', on: { click: onClick } },
-    el('span', { class: 'chance-label', text: t('figure.chance') }), el('span', { class: 'chance-value' }, figure.node, ' ', unit));
+    el('span', { class: 'chance-label', text: t('figure.chance') }), ' ', el('span', { class: 'chance-value' }, figure.node, ' ', unit));
   return {
     node,
     update({ answer, old }, units) {
       figure.update(answer, 'chance_holds', units);
       const chance = answer?.chance_holds ?? null;
       setAttribute(node, 'aria-label', chance === null ? t('figure.chance.none')
-        : t('figure.chance.label', { chance: show('hundred', chance, units) }));
+        : t('figure.chance.label', { chance: show('hundred', chance, units).replace('\u202f', ' ') }));
       setAttribute(node, 'data-old', old);
     },
   };
