@@ -11,6 +11,7 @@ from snowhold.question import BadQuestion, Choice
 TOPICS = {
     "turn": "snowhold.turn",
     "window": "snowhold.window",
+    "run": "snowhold.run",
     "pitch": "snowhold.pitch",
     "reference": "snowhold.reference",
     "board": "snowhold.board",

@@ -23,6 +23,7 @@ CAUTIONS = {
     "estimate": "An estimate. It does not replace the judgement of patrol, an instructor or local "
                 "rules. It says nothing about avalanche danger. Closed stays closed.",
     "avalanche": "From about 30°: see the avalanche bulletin.",
+    "drift_friction": "What a drifting edge slows is not counted: real speeds are lower.",
 }
 
 
@@ -86,6 +87,40 @@ def _millimetres(depth_m: float | None) -> str:
     return "out of the snow" if depth_m is None else f"{depth_m * 1000:.1f} mm"
 
 
+ENDS = {"turns_done": "All turns done", "profile_ends": "The profile ends",
+        "stops": "The rider stops", "too_slow": "Too slow to carve on: the run ends",
+        "too_fast": "Too fast to carve on: the run ends"}
+
+
+def run_lines(reply: dict[str, Any]) -> list[str]:
+    """A run's answer in lines."""
+    fails, worst = reply["fails_at"], reply["worst"]
+    lines = [VERDICTS[reply["verdict"]],
+             f"  {ENDS[reply['end']]} after {reply['time_s']:.1f} s and "
+             f"{reply['distance_m']:.0f} m, at {reply['end_speed_mps'] * 3.6:.0f} km/h; fastest "
+             f"{reply['top_speed_mps'] * 3.6:.0f} km/h."]
+    if fails is not None:
+        why = "" if fails["limit"] is None else f"; there {LIMITS[fails['limit']]}"
+        lines.append(f"  {VERDICTS[fails['state']]} in turn {fails['turn']}, at "
+                     f"{fails['phase_deg']:.0f}° of it, {fails['distance_m']:.0f} m on, at "
+                     f"{fails['speed_mps'] * 3.6:.0f} km/h{why}.")
+    elif worst is not None:
+        lines.append(f"  Closest in turn {worst['turn']}, at {worst['phase_deg']:.0f}° of it: grip "
+                     f"margin {worst['grip_margin']:+.0%}, where {LIMITS[worst['limit']]}.")
+    for leg in reply["legs"] or []:
+        steady = leg["steady_speed_mps"]
+        if leg["no_speed_carves"]:
+            end = "no speed carves it turn after turn; drift it"
+        elif steady is None:
+            end = "carved turns lose speed until too slow"
+        else:
+            end = f"carved turns settle at {steady * 3.6:.0f} km/h"
+        lines.append(f"  {leg['pitch_deg']:.0f}°: {end}.")
+    if reply["critical_pitch_deg"] is not None:
+        lines.append(f"  Turns like these carve up to {reply['critical_pitch_deg']:.1f}°.")
+    return lines
+
+
 def window_lines(reply: dict[str, Any]) -> list[str]:
     """A speed window's answer in lines."""
     lines = ["  pitch   too slow to   holds to   marginal to   carves to (km/h)"]
@@ -110,6 +145,7 @@ def reference_lines(reply: dict[str, Any]) -> list[str]:
 _TOPICS: dict[str, Callable[[dict[str, Any]], list[str]]] = {
     "turn": turn_lines,
     "window": window_lines,
+    "run": run_lines,
     "reference": reference_lines,
     "board": board_lines,
     "boards": boards_lines,
