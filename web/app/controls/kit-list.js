@@ -15,7 +15,7 @@ import { t } from '../text.js';
  */
 export function createKitList({ store, kind, openId, detail, onOpen, onRide }) {
   const list = el('ul', { class: 'kit', 'aria-label': t(`kit.${kind}`) });
-  const undo = el('button', { type: 'button', class: 'plain-button', text: t('undo'), on: { click: () => store.undo() } });
+  const undo = el('button', { type: 'button', class: 'board-button', text: t('undo'), on: { click: () => store.undo() } });
   const node = el('div', {}, list, undo);
   let shown = '';
 

@@ -4,14 +4,20 @@
  */
 
 import { setAttribute, setAttributes, setShown, setText, svg } from '../dom.js';
-import { line, polygon } from './geometry.js';
+import { at, line } from './geometry.js';
+
+/** A closed line that touches the middle of every side: round where the points turn. */
+function rounded(points) {
+  const middle = (i) => points[i].map((value, k) => (value + points[(i + 1) % points.length][k]) / 2);
+  return `M${at(middle(0))}${points.map((_, i) => `Q${at(points[(i + 1) % points.length])} ${at(middle((i + 1) % points.length))}`).join('')}Z`;
+}
 
 const ENDS = [['rear', 'toe'], ['rear', 'heel'], ['front', 'toe'], ['front', 'heel']];
 
 export function createBoardPlan() {
   const part = (name) => svg('path', { class: name });
   const parts = { soles: part('sole out'), board: part('deck'), edge: part('edge'), within: part('sole in'), worst: part('worst') };
-  const labels = Object.fromEntries(ENDS.map((pair) => [pair.join('.'), svg('text', { class: 'label', 'text-anchor': 'middle' })]));
+  const labels = Object.fromEntries(ENDS.map((pair) => [pair.join('.'), svg('text', { class: 'label' })]));
   const nose = svg('text', { class: 'label small' });
   const node = svg('svg', { class: 'plan', role: 'img', focusable: 'false' }, ...Object.values(parts), nose, ...Object.values(labels));
 
@@ -30,14 +36,13 @@ export function createBoardPlan() {
     const soles = boot ? [boot.rear.outline, boot.front.outline] : [];
     const tall = Math.max(...ys, ...soles.flatMap(({ y_m }) => y_m.map(Math.abs)));
     const [from, to] = [xs[0], xs.at(-1)];
-    const room = boot ? em * 1.5 : 6;
-    const scale = Math.min((width - 16) / (to - from), (height / 2 - room) / tall);
+    const scale = Math.min((width - 16) / (to - from), (height / 2 - 5) / tall);
     const middle = (from + to) / 2;
     const place = (x, y) => [width / 2 + (x - middle) * scale, height / 2 - y * scale];
-    const shape = ({ x_m, y_m }) => polygon(x_m.map((x, i) => place(x, y_m[i])));
+    const shape = ({ x_m, y_m }) => rounded(x_m.map((x, i) => place(x, y_m[i])));
     setAttribute(node, 'viewBox', `0 0 ${width} ${height}`);
     setAttribute(node, 'data-scale', scale.toFixed(2));
-    setAttribute(parts.board, 'd', polygon([...xs.map((x, i) => place(x, ys[i])), ...xs.map((x, i) => place(x, -ys[i])).reverse()]));
+    setAttribute(parts.board, 'd', rounded([...xs.map((x, i) => place(x, ys[i])), ...xs.slice(1, -1).map((x, i) => place(x, -ys[i + 1])).reverse()]));
     const end = (x) => {
       const nearest = xs.reduce((best, at, i) => (Math.abs(at - x) < Math.abs(xs[best] - x) ? i : best), 0);
       return [1, -1].map((side) => line(place(x, side * (ys[nearest] - 0.025)), place(x, side * (ys[nearest] + 0.012)))).join('');
@@ -52,11 +57,12 @@ export function createBoardPlan() {
       setAttribute(label, 'data-answer', boot ? `boot.${foot}.${which}.overhang_m` : null);
       if (!boot) continue;
       const side = which === 'toe' ? 1 : -1;
+      // Beside the sole, inside the edge.
       const { x_m, y_m } = boot[foot].outline;
-      const tip = y_m.reduce((best, y, i) => (side * y > side * y_m[best] ? i : best), 0);
-      const [x, y] = place(x_m[tip], y_m[tip]);
+      const near = x_m.filter((_, i) => side * y_m[i] > 0.03);
+      const [x, y] = place(Math.max(...near), side * boot[foot].insert_width_m / 2);
       setText(label, write(boot[foot][which].overhang_m));
-      setAttributes(label, { x: x.toFixed(1), y: (side > 0 ? y - em * 0.4 : y + em * 1.05).toFixed(1),
+      setAttributes(label, { x: (x + 5).toFixed(1), y: (side > 0 ? y + em * 1.15 : y - em * 0.5).toFixed(1),
         'data-worst': worst?.foot === foot && worst.end === which });
     }
     setText(nose, noseWord);

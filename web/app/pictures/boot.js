@@ -4,16 +4,16 @@
  */
 
 import { setAttribute, setAttributes, setShown, setText, svg } from '../dom.js';
-import { arc, line, moved, polygon, upward } from './geometry.js';
+import { arc, at, line, moved, polygon, upward } from './geometry.js';
 
 /** Thickness of the board as it is drawn, m: base to top sheet, common practice. */
 const THICK_M = 0.011;
 /** Height of a boot's shaft as it is drawn, m. */
-const SHAFT_M = 0.2;
+const SHAFT_M = 0.26;
 
 export function createBootSection() {
   const part = (name) => svg('path', { class: name });
-  const parts = { snow: part('snow'), boot: part('boot'), sole: part('sole'), deck: part('deck'), surface: part('surface'),
+  const parts = { snow: part('snow'), boot: part('boot'), binding: part('binding'), deck: part('deck'), surface: part('surface'),
     asked: part('asked'), angle: part('angle'), touch: part('touch') };
   const labels = { angle: svg('text', { class: 'label', 'text-anchor': 'middle' }), asked: svg('text', { class: 'label small' }) };
   const node = svg('svg', { class: 'boot-section', role: 'img', focusable: 'false' }, ...Object.values(parts), ...Object.values(labels));
@@ -30,8 +30,8 @@ export function createBootSection() {
    */
   function update({ side, other, widthM, dragDeg, askedDeg, words }, { width, height, em }) {
     const tilt = dragDeg ?? Math.min(85, askedDeg ?? 60);
-    const scale = Math.min(width / 0.46, (height - em) / 0.36);
-    const foot = [width * 0.56, height - em * 1.7];
+    const scale = Math.min(width / 0.5, (height - em * 2) / 0.3);
+    const foot = [width * 0.48, height - em * 1.7];
     // From the edge: along the base away from the snow, and square to it.
     const along = upward(tilt - 90);
     const square = upward(tilt);
@@ -42,30 +42,33 @@ export function createBootSection() {
     setAttribute(parts.snow, 'd', `M0 ${level.toFixed(1)}H${width}V${height}H0Z`);
     setAttribute(parts.surface, 'd', `M0 ${level.toFixed(1)}H${width}`);
     setAttribute(parts.deck, 'd', polygon([place(0, 0), place(widthM, 0), place(widthM, THICK_M), place(0, THICK_M)]));
-    const heel = [widthM + other.overhang_m, other.height_m];
-    const low = Math.min(side.height_m, heel[1]) - 0.016;
+    // The boot from its end in the snow, `s` along the sole and `up` square to the base.
     const near = -side.overhang_m;
-    setAttribute(parts.sole, 'd', polygon([place(near + 0.03, THICK_M), place(near + 0.03, low), toe, place(near + 0.012, side.height_m + 0.03),
-      place(heel[0] - 0.012, heel[1] + 0.03), place(...heel), place(heel[0] - 0.03, low), place(heel[0] - 0.03, THICK_M)]));
-    const [shaftFrom, shaftTo] = side.isToe ? [0.55, 0.95] : [0.05, 0.45];
-    const on = (share) => near + (heel[0] - near) * share;
-    setAttribute(parts.boot, 'd', polygon([place(on(0.04), side.height_m + 0.028), place(on(side.isToe ? 0.3 : 0.02), side.height_m + 0.085), place(on(shaftFrom), SHAFT_M),
-      place(on(shaftTo), SHAFT_M), place(on(side.isToe ? 0.98 : 0.7), heel[1] + 0.085), place(on(0.96), heel[1] + 0.028)]));
+    const long = widthM + other.overhang_m - near;
+    const toeward = (s) => (side.isToe ? s : 1 - s);
+    const on = (s, up) => at(place(near + long * toeward(s), up));
+    const heights = side.isToe ? [side.height_m, other.height_m] : [other.height_m, side.height_m];
+    const flat = Math.min(...heights) - 0.006;
+    setAttribute(parts.binding, 'd', `M${on(0.24, THICK_M)}L${on(0.24, flat)}L${on(0.86, flat)}L${on(0.86, THICK_M)}Z`);
+    setAttribute(parts.boot, 'd', `M${on(0, heights[0])}L${on(0.16, flat)}L${on(0.86, flat)}L${on(1, heights[1])}`
+      + `C${on(1.04, 0.1)} ${on(0.92, 0.14)} ${on(0.94, 0.19)}L${on(0.98, SHAFT_M)}L${on(0.52, SHAFT_M)}L${on(0.5, 0.19)}`
+      + `C${on(0.47, 0.14)} ${on(0.3, 0.125)} ${on(0.14, 0.115)}C${on(0, 0.105)} ${on(-0.03, 0.08)} ${on(0, heights[0])}Z`);
     const radius = Math.min(widthM * scale * 0.8, width * 0.4);
     setAttribute(parts.angle, 'd', arc(foot, radius, -90, tilt - 90));
     const asked = askedDeg !== null && dragDeg !== null;
-    setAttribute(parts.asked, 'd', asked ? line(foot, moved(foot, [upward(Math.min(90, askedDeg) - 90), widthM * scale * 1.12])) : null);
+    // What the turn asks for, as a ray and, in the snow, its name.
+    const key = [6, height - em * 0.75];
+    setAttribute(parts.asked, 'd', asked ? line(foot, moved(foot, [upward(Math.min(90, askedDeg) - 90), widthM * scale * 1.12]))
+      + line(key, moved(key, [[1, 0], em * 1.5])) : null);
     setAttribute(parts.touch, 'd', dragDeg === null ? null
       : `M${(toe[0] - em * 0.42).toFixed(1)} ${(toe[1] + em * 0.95).toFixed(1)}h${(em * 0.84).toFixed(1)}L${toe[0].toFixed(1)} ${(toe[1] + em * 0.2).toFixed(1)}Z`);
-    const at = moved(foot, [upward(tilt / 2 - 90), radius * 0.62]);
+    const named = moved(foot, [upward(tilt / 2 - 90), radius * 0.62]);
     setText(labels.angle, words.angle);
-    setAttributes(labels.angle, { x: at[0].toFixed(1), y: (at[1] + em * 0.35).toFixed(1) });
+    setAttributes(labels.angle, { x: named[0].toFixed(1), y: (named[1] + em * 0.35).toFixed(1) });
     setShown(labels.asked, asked);
     if (!asked) return;
     setText(labels.asked, words.asked);
-    const end = moved(foot, [upward(Math.min(90, askedDeg) - 90), widthM * scale * 1.16]);
-    const wide = words.asked.length * em * 0.5;
-    setAttributes(labels.asked, { x: Math.max(4, Math.min(width - wide - 4, end[0] - wide / 2)).toFixed(1), y: Math.max(em, end[1] - em * 0.2).toFixed(1) });
+    setAttributes(labels.asked, { x: (key[0] + em * 1.9).toFixed(1), y: (key[1] + em * 0.35).toFixed(1) });
   }
 
   return { node, update };

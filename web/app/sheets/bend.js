@@ -35,7 +35,7 @@ export function createBendSheet({ store, engine }, echo) {
   const result = createFigure('stiffness', { class: 'big' });
   const [low, high] = [createFigure('stiffness'), createFigure('stiffness')];
   const weakest = el('span');
-  const use = el('button', { type: 'button', class: 'plain-button', on: { click: () => put(found.stiffness_nm2) } });
+  const use = el('button', { type: 'button', class: 'board-button', on: { click: () => put(found.stiffness_nm2) } });
   const measured = el('div', { class: 'measured', hidden: true }, el('p', { class: 'lead' }, result.node),
     el('p', { class: 'aside' }, low.node, ` ${t('figure.window.to')} `, high.node, ' ', weakest), use);
   const typical = el('div', { class: 'buttons' });
@@ -70,7 +70,7 @@ export function createBendSheet({ store, engine }, echo) {
 
   function showTypical(entries) {
     if (typical.childElementCount) return;
-    typical.append(...entries.map(({ code, stiffness_nm2: value, source }) => el('button', { type: 'button', class: 'plain-button', on: { click: () => put(value) } },
+    typical.append(...entries.map(({ code, stiffness_nm2: value, source }) => el('button', { type: 'button', class: 'board-button', on: { click: () => put(value) } },
       el('span', {}, t('board.typical.entry', { name: t(`board.typical.${code}`), value: show('stiffness', value, store.get().units) })),
       el('span', { class: 'source', text: t(`board.source.${source}`) }))));
   }

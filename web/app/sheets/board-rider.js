@@ -43,7 +43,7 @@ export function createBoardRiderSheet(store, echo) {
   const field = el('input', { id: 'rider-name', type: 'text', class: 'text-field', autocomplete: 'off', maxlength: 40, enterkeyhint: 'done',
     on: { input: () => store.set({ board: { rider_name: field.value } }, { undo: 'rider_name' }), change: () => store.seal(),
       keydown: (event) => { if (event.key === 'Enter') field.blur(); } } });
-  const save = el('button', { type: 'button', class: 'plain-button strong', text: t('kit.save'), on: { click: saveRider } });
+  const save = el('button', { type: 'button', class: 'board-button strong', text: t('kit.save'), on: { click: saveRider } });
   const status = el('p', { class: 'aside', role: 'status' });
   const list = createKitList({
     store, kind: 'riders', openId: (state) => boardOf(state).rider_id,

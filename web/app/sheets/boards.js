@@ -50,7 +50,7 @@ export function createBoardsSheet(store, onRide, echo) {
   const field = el('input', { id: 'board-name', type: 'text', class: 'text-field', autocomplete: 'off', maxlength: 40, enterkeyhint: 'done',
     on: { input: () => store.set({ board: { name: field.value } }, { undo: 'board_name' }), change: () => store.seal(),
       keydown: (event) => { if (event.key === 'Enter') field.blur(); } } });
-  const save = el('button', { type: 'button', class: 'plain-button strong', text: t('kit.save'), on: { click: () => saveBoard(store) } });
+  const save = el('button', { type: 'button', class: 'board-button strong', text: t('kit.save'), on: { click: () => saveBoard(store) } });
   const saved = el('p', { class: 'aside', role: 'status' });
   const list = createKitList({
     store, kind: 'boards', openId: (state) => boardOf(state).board_id,

@@ -126,7 +126,7 @@ export function createCompareSheet({ store, onOpen, rider, openName }, echo) {
       const speed = unitOf('speed', units);
       drawn = { usual: { low, mean, high }, boards: names.map((name, i) => ({ name, windows: boards.boards[i].speed_windows })),
         unit: speed.show, write: (value) => formatNumber(value),
-        words: { none: t('compare.noSpeed'), usual: t('compare.usual', { low: show('bareSpeed', low, units).replace(/[.,]\d$/, ''), high: show('speed', high, units) }),
+        words: { none: t('compare.noSpeed'), usual: t('compare.usual', { low: show('wholeSpeed', low, units), high: show('speed', high, units) }),
           label: t('compare.picture', { boards: names.map((name, i) => `${name}: ${spoken(boards.boards[i], units)}`).join('; '), low: show('speed', low, units), high: show('speed', high, units) }) } };
       windows.update(drawn);
       const pitches = boards.boards[0].speed_windows.map(({ pitch_deg: pitch }) => pitch);

@@ -21,7 +21,7 @@ export function createMeasureSheet(store, echo) {
       createNumber({ key, kind, id: `board-width-${i}-${key}`, bind: boundWidth(i, key), store }));
     return { pair, node: el('fieldset', { class: 'width-row' }, el('legend', { text: t('board.width.row', { n: i + 1 }) }), ...pair.map(({ node }) => node)) };
   });
-  const button = (key, onClick) => el('button', { type: 'button', class: 'plain-button', text: t(key), on: { click: onClick } });
+  const button = (key, onClick) => el('button', { type: 'button', class: 'board-button', text: t(key), on: { click: onClick } });
   const more = button('board.width.add', () => setWidths(added(kept())));
   const fewer = button('board.width.remove', () => setWidths(widths().length > 3 ? widths().slice(0, -1) : null));
   const radius = createFigure('length', { class: 'big' });

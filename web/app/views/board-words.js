@@ -18,13 +18,13 @@ function written(reason, units) {
 }
 
 /**
- * The deciding reason of a verdict, or what fits, in a sentence.
+ * The deciding reason of a verdict, or that there is none, in a sentence.
  * @param {any} side a board of the comparison's answer
- * @param {any} question its fields, for what has not been looked at
+ * @param {string} rider for whom
  */
-export function boardReason(side, units) {
+export function boardReason(side, units, rider = '') {
   const [first] = side.reasons;
-  return first ? t(`board.why.${first.code}`, written(first, units)) : t(side.carve_speed_mps ? 'board.why.suits' : 'board.why.suitsDrifted');
+  return first ? t(`board.why.${first.code}`, written(first, units)) : t(side.carve_speed_mps ? 'board.why.suits' : 'board.why.suitsDrifted', { rider }).trim();
 }
 
 /** What would clear it, or what has not been looked at. */

@@ -50,7 +50,7 @@ export function createBoardView(host, context) {
   const nameNote = el('span', { class: 'kit-detail' });
   const title = el('div', { class: 'board-title' },
     el('button', { type: 'button', class: 'board-open', 'aria-haspopup': 'dialog', on: { click: () => open(boardsSheet) } }, name, ' ', nameNote),
-    el('button', { type: 'button', class: 'plain-button', text: t('kit.save'), on: { click: () => saveBoard(store) } }));
+    el('button', { type: 'button', class: 'board-button', text: t('kit.save'), on: { click: () => saveBoard(store) } }));
   const docks = Object.fromEntries(Object.entries({
     boots: ['dock.boots', bootsSheet], bend: ['dock.bend', bendSheet], measure: ['dock.measure', measureSheet], compare: ['dock.compare', compareSheet],
     rider: ['dock.rider', riderSheet], snow: ['sheet.snow', snowSheet],
@@ -102,7 +102,7 @@ export function createBoardView(host, context) {
     const old = whyOld(errors);
     if (last) {
       const side = last.boards.boards[0];
-      verdict.update(side.verdict, boardReason(side, units), boardRemedy(side, last.answer, units), old !== '' || !asker.settled());
+      verdict.update(side.verdict, boardReason(side, units, riderText(state)), boardRemedy(side, last.answer, units), old !== '' || !asker.settled());
     } else verdict.update(null, t(old || 'engine.starting'), '', true);
     figures.update(last, units);
     pictures.update(last && { answer: last.answer, question: last.questions.board, units }, old && t(last ? `${old}.last` : old));
@@ -140,33 +140,38 @@ export function createBoardView(host, context) {
 /** Few and large: sidecut radius, the speeds that it carves, drag angle against what is asked. */
 function createHeadFigures() {
   const radius = createFigure('length');
-  const [from, to] = [createFigure('bareSpeed'), createFigure('speedWindow')];
+  const [from, to] = [createFigure('wholeSpeed'), createFigure('speed')];
   const drag = createFigure('angle');
-  const never = el('span', { hidden: true });
-  const dragLabel = el('dt', { text: t('board.drags.head') });
+  const [never, none, dragLabel] = [el('span', { hidden: true }), el('span', { hidden: true, text: t('board.noSpeed') }), el('dt')];
   const carves = el('span', {}, from.node, '–', to.node);
-  const none = el('span', { hidden: true, text: t('board.noSpeed') });
-  const node = el('dl', { class: 'figures board-figures' }, el('div', {}, el('dt', { text: t('board.sidecut') }), el('dd', {}, radius.node)),
-    el('div', {}, el('dt', { text: t('board.carves.head') }), el('dd', {}, carves, none)),
-    el('div', {}, dragLabel, el('dd', {}, drag.node, never)));
+  const spread = createFigure('length');
+  const pitches = el('dd', { class: 'beside' });
+  const asked = el('dd', { class: 'beside' });
+  const group = (dt, big, beside) => el('div', {}, dt, el('dd', {}, ...big), beside);
+  const node = el('dl', { class: 'figures board-figures' },
+    group(el('dt', { text: t('board.sidecut.head') }), [radius.node], el('dd', { class: 'beside' }, '± ', spread.node)),
+    group(el('dt', { text: t('board.carves.head') }), [carves, none], pitches), group(dragLabel, [drag.node, never], asked));
   return {
     node,
     update(last, units) {
+      setText(dragLabel, t('board.drags.none'));
       if (!last) return;
       const { answer, boards } = last;
       radius.update(answer, 'sidecut_radius_m', units);
-      const window = boards.boards[0].carve_speed_mps;
+      spread.update(answer, 'sidecut_spread_m', units);
+      const { speed_windows: windows, carve_speed_mps: window } = boards.boards[0];
       setShown(carves, window !== null);
       setShown(none, window === null);
       from.update(boards, 'boards.0.carve_speed_mps.min', units);
       to.update(boards, 'boards.0.carve_speed_mps.max', units);
+      setText(pitches, t('board.carves.on', { low: showQuantity('pitch', windows[0].pitch_deg, units), high: showQuantity('pitch', windows.at(-1).pitch_deg, units) }));
       const first = firstToDrag(answer.boot);
       setShown(drag.node, first !== null);
       setShown(never, first === null);
       setText(never, t(answer.boot ? 'board.never' : 'board.notSet'));
       if (first) drag.update(answer, `drag_angle_deg.${first.end}`, units);
-      setText(dragLabel, first ? t(answer.needed ? 'board.drags.asked' : 'board.drags.head', {
-        end: t(`board.part.${first.end}`), edge: showQuantity('angle', answer.needed?.edge_angle_deg ?? null, units) }) : t('board.drags.none'));
+      setText(dragLabel, first ? t('board.drags.head', { end: t(`board.part.${first.end}`) }) : t('board.drags.none'));
+      setText(asked, answer.needed ? t('board.drags.asked', { edge: showQuantity('angle', answer.needed.edge_angle_deg, units) }) : '');
     },
   };
 }
