@@ -261,6 +261,7 @@ def test_state_survives_a_closed_tab(turn, installed):
 
 
 def test_a_kept_state_of_another_version_does_no_harm(turn):
+    turn.wait_for_timeout(1000)  # until the page has nothing left to write
     turn.evaluate("""() => new Promise((done) => {
         const open = indexedDB.open('keyval-store');
         open.onsuccess = () => {
