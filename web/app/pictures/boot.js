@@ -14,7 +14,7 @@ const SHAFT_M = 0.26;
 export function createBootSection() {
   const part = (name) => svg('path', { class: name });
   const parts = { snow: part('snow'), boot: part('boot'), binding: part('binding'), deck: part('deck'), surface: part('surface'),
-    asked: part('asked'), angle: part('angle'), touch: part('touch') };
+    rim: part('asked-rim'), asked: part('asked'), angle: part('angle'), touch: part('touch') };
   const labels = { angle: svg('text', { class: 'label', 'text-anchor': 'middle' }), asked: svg('text', { class: 'label small' }) };
   const node = svg('svg', { class: 'boot-section', role: 'img', focusable: 'false' }, ...Object.values(parts), ...Object.values(labels));
 
@@ -31,7 +31,7 @@ export function createBootSection() {
   function update({ side, other, widthM, dragDeg, askedDeg, words }, { width, height, em }) {
     const tilt = dragDeg ?? Math.min(85, askedDeg ?? 60);
     const scale = Math.min(width / 0.5, (height - em * 2) / 0.3);
-    const foot = [width * 0.48, height - em * 1.7];
+    const foot = [width * 0.54, height - em * 1.7];
     // From the edge: along the base away from the snow, and square to it.
     const along = upward(tilt - 90);
     const square = upward(tilt);
@@ -58,8 +58,9 @@ export function createBootSection() {
     const asked = askedDeg !== null && dragDeg !== null;
     // What the turn asks for, as a ray and, in the snow, its name.
     const key = [6, height - em * 0.75];
-    setAttribute(parts.asked, 'd', asked ? line(foot, moved(foot, [upward(Math.min(90, askedDeg) - 90), widthM * scale * 1.12]))
-      + line(key, moved(key, [[1, 0], em * 1.5])) : null);
+    const ray = asked ? line(foot, moved(foot, [upward(Math.min(90, askedDeg) - 90), widthM * scale * 1.12])) : '';
+    setAttribute(parts.rim, 'd', ray);
+    setAttribute(parts.asked, 'd', asked ? ray + line(key, moved(key, [[1, 0], em * 1.5])) : '');
     setAttribute(parts.touch, 'd', dragDeg === null ? null
       : `M${(toe[0] - em * 0.42).toFixed(1)} ${(toe[1] + em * 0.95).toFixed(1)}h${(em * 0.84).toFixed(1)}L${toe[0].toFixed(1)} ${(toe[1] + em * 0.2).toFixed(1)}Z`);
     const named = moved(foot, [upward(tilt / 2 - 90), radius * 0.62]);

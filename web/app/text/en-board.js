@@ -34,6 +34,7 @@ export const enBoard = {
   'board.fix.wide_for_boot': 'Look for a narrower waist.',
   'board.fix.stiffness': 'Look for {range}.',
   'board.fix.noStiffness': 'No stiffness suits you on this board.',
+  'board.close.boot': 'But the boot is close: drags at {drag}, asked {needed}.',
   'board.unchecked.bend': 'Not checked: its stiffness.',
   'board.unchecked.boots': 'Not checked: your boots.',
   'board.unchecked.bend.boots': 'Not checked: its stiffness, your boots.',
@@ -69,7 +70,7 @@ export const enBoard = {
 
   'board.picture.nose': 'nose',
   'board.picture.tail': 'tail',
-  'board.picture.asked': 'turn asks {edge}',
+  'board.picture.asked': 'asked {edge}',
   'board.picture.bites': '{length} of edge bites',
   'board.picture.plan': 'The board from above, to scale, with both boots; stance {stance}.',
   'board.picture.section': 'Board and boot in section, to scale: {end} touches the snow at {edge}; the turn asks for {asked}.',

@@ -36,8 +36,18 @@ export function boardRemedy(side, board, units) {
     if (first.code === 'too_soft' || first.code === 'too_stiff') return stiffnessToLookFor(side.stiffness_range_nm2, units);
     return hasText(key) ? t(key, written(first, units)) : '';
   }
+  const least = leastDragDeg(side);
+  if (least !== null && side.needed && least < side.needed.edge_angle_deg) {
+    return t('board.close.boot', { drag: show('angle', least, units), needed: show('angle', side.needed.edge_angle_deg, units) });
+  }
   const missing = [board.bend === null ? 'bend' : '', board.boot === null ? 'boots' : ''].filter(Boolean);
   return missing.length ? t(`board.unchecked.${missing.join('.')}`) : '';
+}
+
+/** The lesser drag angle of toe and heel, null: neither drags, or no boots. */
+function leastDragDeg({ drag_angle_deg: angles }) {
+  const known = Object.values(angles ?? {}).filter((angle) => angle !== null);
+  return known.length ? Math.min(...known) : null;
 }
 
 /** All reasons of a board, each a sentence. */
@@ -92,7 +102,7 @@ export function saidErrors(errors) {
     [/^a stiffness from ([\d.]+) to ([\d.]+)/, (found) => t('board.error.stiffness', { low: found[1], high: found[2] })],
   ];
   return errors.map((error) => {
-    if (/null is not a number|is missing/.test(error.problem)) return { ...error, text: t('board.error.missing') };
+    if (/^(null|'') is not a number|is missing/.test(error.problem)) return { ...error, text: t('board.error.missing') };
     for (const [pattern, say] of texts) {
       const found = pattern.exec(error.allowed);
       if (found) return { ...error, text: say(found) };
