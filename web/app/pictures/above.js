@@ -130,10 +130,12 @@ export function createAbove() {
         inside(points, Math.round((points.length - 1) * share), text, em * 1.1));
       return clear(spots, (text.length * em) / 4, em * 1.3, avoid);
     };
-    put(labels.line, words.line, words.line && named(ridden, words.line, [...taken, ...(otherPoints ?? [])]));
     // The board's own arc is the smaller one: named under its end.
-    put(labels.other, otherPoints && words.other, otherPoints && (shown.otherKind === 'own'
-      ? moved(otherPoints.at(-1), [[0, 1], em * 0.9]) : named(otherPoints, words.other, [...taken, ...ridden])));
+    const own = otherPoints && shown.otherKind === 'own' ? moved(otherPoints.at(-1), [[0, 1], em * 0.9]) : null;
+    put(labels.line, words.line, words.line && named(ridden, words.line, own
+      ? [...taken, ...otherPoints, own, moved(own, [[1, 0], words.other.length * em * 0.5])] : taken));
+    put(labels.other, otherPoints && words.other,
+      own ?? (otherPoints && named(otherPoints, words.other, [...taken, ...ridden])));
   }
 
   function drawFallLine(em, middle, half, text) {
