@@ -59,16 +59,16 @@ export function createStore(initial) {
     }
   }
 
-  function remember(what) {
+  function remember(what, alone) {
     const last = history.at(-1);
-    const now = performance.now();
-    if (last?.what === what && (last.open || now - last.at < TOGETHER_MS)) {
+    const now = alone ? -Infinity : performance.now();
+    if (!alone && last?.what === what && (last.open || now - last.at < TOGETHER_MS)) {
       last.at = now;
       last.open = true;
       return;
     }
     const before = Object.fromEntries(UNDONE.map((key) => [key, state[key]]));
-    history.push({ what, open: true, at: now, before });
+    history.push({ what, open: !alone, at: now, before });
     if (history.length > UNDO_DEPTH) history.shift();
   }
 
@@ -78,11 +78,11 @@ export function createStore(initial) {
     /**
      * Changes the state: the parts of MERGED are merged, other keys replaced.
      * @param {Partial<State>} patch
-     * @param {{undo?: string}} [options] `undo`: name of what is changed; changes of the same
-     *   thing in one go are undone together
+     * @param {{undo?: string, alone?: boolean}} [options] `undo`: name of what is changed; changes
+     *   of the same thing in one go are undone together, one that is `alone` is not
      */
-    set(patch, { undo } = {}) {
-      if (undo) remember(undo);
+    set(patch, { undo, alone = false } = {}) {
+      if (undo) remember(undo, alone);
       const next = { ...state, ...patch };
       for (const key of MERGED) {
         if (key in patch) next[key] = { ...state[key], ...patch[key] };

@@ -53,9 +53,7 @@ export function createLineSheet({ store, echo }) {
     el('h3', { text: t('line.shape') }), el('div', { class: 'shape-box' }, shape.node, start.node));
 
   function setLine(line) {
-    store.seal();
-    store.set({ inputs: { line_radius_m: line } }, { undo: 'line_radius_m' });
-    store.seal();
+    store.set({ inputs: { line_radius_m: line } }, { undo: 'line_radius_m', alone: true });
   }
   /** The engine's tightest line that holds, put inside its bound where the full answer has it. */
   function tightest() {

@@ -17,9 +17,7 @@ export function createPresets(store) {
       el('span', { class: 'preset-who', text: t(`speeds.${who}`) }), mean.node);
     function set() {
       if (!speed) return;
-      store.seal();
-      store.set({ inputs: { speed_mps: speed.mean_mps } }, { undo: 'speed_mps' });
-      store.seal();
+      store.set({ inputs: { speed_mps: speed.mean_mps } }, { undo: 'speed_mps', alone: true });
     }
     function update(reference, units) {
       const index = reference.speeds.findIndex((one) => one.who === who);

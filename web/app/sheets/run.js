@@ -56,9 +56,7 @@ export function createRunSheet({ store, engine, onChange }) {
   }
 
   function toggleLine() {
-    store.seal();
-    store.set({ inputs: { line_radius_m: line } }, { undo: 'line_radius_m' });
-    store.seal();
+    store.set({ inputs: { line_radius_m: line } }, { undo: 'line_radius_m', alone: true });
   }
 
   function draw(size) {

@@ -43,7 +43,5 @@ function cost(kind, from, to, units) {
  * @param {ReturnType<import('../store.js').createStore>} store
  */
 export function applyChange(store, { input, to }) {
-  store.seal();
-  store.set({ inputs: { [input]: to } }, { undo: input });
-  store.seal();
+  store.set({ inputs: { [input]: to } }, { undo: input, alone: true });
 }
