@@ -89,6 +89,7 @@ function precacheEntries() {
   return fs.readdirSync(out, { recursive: true, withFileTypes: true })
     .filter((entry) => entry.isFile())
     .map((entry) => path.relative(out, path.join(entry.parentPath ?? entry.path, entry.name)))
+    .filter((url) => !url.startsWith('licences/'))
     .sort()
     .map((url) => {
       const bytes = fs.readFileSync(path.join(out, url));
@@ -112,6 +113,9 @@ writePage();
 for (const name of ['icons', 'manifest.webmanifest']) {
   if (fs.existsSync(path.join(web, name))) fs.cpSync(path.join(web, name), path.join(out, name), { recursive: true });
 }
+// Fonts come with the terms that they may be passed on under; nobody needs those on the hill.
+const fonts = path.join(web, 'styles/fonts/OFL.txt');
+if (fs.existsSync(fonts)) fs.cpSync(fonts, path.join(out, 'licences/fonts.txt'));
 bundle(['service-worker/service-worker.js'], {
   entryNames: '[name]',
   format: 'iife', // a classic script: service workers as modules are not everywhere yet

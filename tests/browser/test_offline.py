@@ -4,6 +4,7 @@ import http.server
 import shutil
 import threading
 from functools import partial
+from pathlib import Path
 
 import pytest
 from playwright.sync_api import BrowserContext, Page, expect
@@ -66,6 +67,13 @@ def test_first_visit_shows_progress_up_to_the_whole(host, page):
     assert seen[-1]["done"] == seen[-1]["total"] > 0
 
 
+def precached(folder: Path) -> list[str]:
+    """Every file of the app but the service worker, which the browser keeps itself."""
+    return [str(path.relative_to(folder)) for path in folder.rglob("*")
+            if path.is_file() and path.name != "service-worker.js"
+            and path.parent.name != "licences"]
+
+
 def is_next(page: Page) -> tuple[bool, bool]:
     """Whether the page's text and its script are the next version's."""
     return (page.locator("#next-version").count() == 1,
@@ -97,10 +105,8 @@ def test_an_update_swaps_whole(host, phone, site, next_site):
     wait_arrays(page)
     assert is_next(page) == (False, False)
     size_of = "async (path) => (await (await fetch(path)).arrayBuffer()).byteLength"
-    for file in site.rglob("*"):
-        if file.is_file() and file.name != "service-worker.js":
-            size = page.evaluate(size_of, str(file.relative_to(site)))
-            assert size == file.stat().st_size, file.name
+    for name in precached(site):
+        assert page.evaluate(size_of, name) == (site / name).stat().st_size, name
     page.close()
 
     # The next cold start is the next version, whole, and needs no network.
@@ -111,14 +117,15 @@ def test_an_update_swaps_whole(host, phone, site, next_site):
     wait_arrays(page)
     assert is_next(page) == (True, True)
     assert page.workers[0].evaluate("self.version") == "next"
-    # Nothing of the old version is left behind.
+    # Nothing of the old version is left behind, nor the snapshot of its engine.
     kept = page.evaluate("""async () => {
         const caches_ = await Promise.all((await caches.keys()).map((name) => caches.open(name)));
         const keys = await Promise.all(caches_.map((cache) => cache.keys()));
         return keys.flat().map(({ url }) => new URL(url).pathname.slice(1));
     }""")
-    assert sorted(kept) == sorted(str(f.relative_to(next_site)) for f in next_site.rglob("*")
-                                  if f.is_file() and f.name != "service-worker.js")
+    engine = next(next_site.glob("assets/engine-*.js"))
+    assert sorted(kept) == sorted([
+        *precached(next_site), f"{engine.relative_to(next_site)}.snapshot"])
 
 
 def test_a_broken_update_is_never_used(host, phone, next_site, tmp_path):
