@@ -22,8 +22,8 @@ export function createBootsSheet(store, echo) {
     return { name, out, drags, never, node: el('div', { class: 'row', role: 'row' }, el('span', { role: 'rowheader', text: t(`board.end.${name}`) }),
       el('span', { class: 'cell', role: 'cell' }, out.node), el('span', { class: 'cell', role: 'cell' }, drags.node, never)) };
   });
-  const head = el('div', { class: 'row head', role: 'row' }, ...['', 'board.overhang', 'board.drags'].map((key) =>
-    el('span', { role: 'columnheader', text: key && t(key), 'aria-label': key ? null : t('board.end') })));
+  const head = el('div', { class: 'row head', role: 'row' }, ...['board.end', 'board.overhang', 'board.drags'].map((key) =>
+    el('span', { role: 'columnheader', text: t(key) })));
   const table = el('div', { class: 'rows end-rows', role: 'table', 'aria-label': t('sheet.boots') }, head, ...ends.map(({ node }) => node));
   const asks = el('p', { class: 'lead' });
   const waist = createFigure('width');
