@@ -444,7 +444,8 @@ def test_nothing_needs_sideways_scrolling(turn, width, height, percent):
         fill(turn, name)
         wide[name] = found.evaluate("""(sheet) => {
             const body = sheet.querySelector('.sheet-body');
-            return Math.max(sheet.scrollWidth - sheet.clientWidth, body.scrollWidth - body.clientWidth);
+            return Math.max(sheet.scrollWidth - sheet.clientWidth,
+                body.scrollWidth - body.clientWidth);
         }""")
         done(turn)
     assert {name: over for name, over in wide.items() if over > 0} == {}

@@ -34,6 +34,8 @@ export function createRunSheet({ store, engine, onChange }) {
   const sheet = createSheet('run', null, el('div', { role: 'status' }, word, why), result, setup.node);
 
   let asked = '';
+  /** The question of the answer that is shown. */
+  let answered = '';
   let errors = [];
   let answer = null;
   /** The line that a press of the button sets; null: carve. */
@@ -45,11 +47,16 @@ export function createRunSheet({ store, engine, onChange }) {
     if (wanted === asked) return;
     asked = wanted;
     try {
-      const found = await engine.ask('turn-run', question);
-      if (found === null) return;
-      errors = found.error ?? [];
-      if (!found.error) answer = found;
-      onChange();
+      // The first run is shown before its critical pitch is known, which takes longer.
+      const steps = answer ? [question] : [{ ...question, critical: false }, question];
+      for (const step of steps) {
+        const found = await engine.ask('turn-run', step);
+        if (found === null || asked !== wanted) return;
+        errors = found.error ?? [];
+        if (!found.error) answer = found;
+        if (step === question) answered = wanted;
+        onChange();
+      }
     } catch {
       // The engine has failed; the view says so.
     }
@@ -77,6 +84,7 @@ export function createRunSheet({ store, engine, onChange }) {
       ask(runQuestion(state));
       setup.update(state, errors);
       setShown(result, answer !== null);
+      setAttribute(result, 'data-old', asked !== answered);
       if (!answer) {
         setText(word, t(errors.length ? 'run.unknown' : 'run.waiting'));
         return;
