@@ -1,16 +1,18 @@
-"""Driving the Pitch view: opening it, setting its slope, reading figures against the engine's answer."""
+"""Driving the Pitch view: opening it, setting its slope, reading figures against the engine."""
 
 from __future__ import annotations
 
 import base64
 import json
 import math
+from collections.abc import Iterator
 from decimal import ROUND_HALF_UP, Decimal
+from pathlib import Path
 from typing import Any
 
-from playwright.sync_api import Locator, Page, expect
-
-from conftest import START_MS, wait_ready
+import pytest
+from conftest import PHONE, START_MS, Host, wait_offline, wait_ready
+from playwright.sync_api import Browser, BrowserContext, Locator, Page, expect
 
 OWN = ("speed_mps", "fall_at_m", "clothing_friction", "drag_area_m2", "altitude_m",
        "air_temperature_c", "braking_friction", "reaction_time_s", "sight_distance_m", "waist_m")
@@ -124,7 +126,8 @@ def readings(answer: dict[str, Any], key: str) -> set[str]:
 def wrong_figures(page: Page, answer: dict[str, Any]) -> tuple[int, list[str]]:
     """Figures in sight, and those whose numbers are none of their key's readings."""
     found = page.evaluate("""() => [...document.querySelectorAll('[data-answer]')]
-        .filter((node) => node.checkVisibility() && node.textContent && !node.hasAttribute('hidden'))
+        .filter((node) => node.checkVisibility() && node.textContent)
+        .filter((node) => !node.hasAttribute('hidden'))
         .filter((node) => !document.querySelector('dialog[open]') || node.closest('dialog[open]'))
         .map((node) => [node.dataset.answer, node.textContent])""")
     wrong = []
@@ -145,3 +148,35 @@ def shows(page: Page, asked: dict[str, Any], answer: dict[str, Any]) -> int:
             return count
         page.wait_for_timeout(100)
     raise AssertionError((asked, wrong))
+
+
+@pytest.fixture(scope="module")
+def installed(browser: Browser, site: Path) -> Iterator[tuple[BrowserContext, str, Host]]:
+    """A phone that has the app, and its address: later tests start from its cache."""
+    host = Host(site)
+    context = browser.new_context(**PHONE)
+    page = context.new_page()
+    open_pitch(page, host.url)
+    wait_offline(page)
+    page.close()
+    yield context, host.url, host
+    context.close()
+    host.stop()
+
+
+@pytest.fixture
+def pitch(installed) -> Iterator[Page]:
+    """The Pitch view as on a first visit: nothing kept."""
+    context, url, _ = installed
+    page = context.new_page()
+    errors: list[str] = []
+    page.on("pageerror", lambda error: errors.append(str(error)))
+    page.goto(f"{url}manifest.webmanifest")
+    page.evaluate("""() => new Promise((done) => {
+        indexedDB.deleteDatabase('keyval-store').onsuccess = done;
+    })""")
+    page.on("console", lambda said: errors.append(said.text) if said.type == "error" else None)
+    open_pitch(page, url)
+    yield page
+    page.close()
+    assert errors == []

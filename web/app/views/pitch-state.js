@@ -50,7 +50,9 @@ export const EMPTY_LEG = { by: 'pitch_deg', value: '', length_m: '', snow: null 
 
 /** The view's part of the state, whole. */
 export function pitchOf(state) {
-  return { ...START, ...state.pitch };
+  const pitch = { ...START, ...state.pitch };
+  // What was kept long ago, or damaged, must not keep the view from opening.
+  return Array.isArray(pitch.legs) && pitch.legs.length ? pitch : { ...START };
 }
 
 /** The leg whose numbers are on the page, and its index. */
