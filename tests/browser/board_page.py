@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from decimal import ROUND_HALF_UP, Decimal
+from decimal import ROUND_FLOOR, ROUND_HALF_UP, Decimal
 from typing import Any
 
 from playwright.sync_api import Locator, Page, expect
@@ -59,8 +59,10 @@ def ways(value: Any, key: str) -> list[str]:
         return [VERDICTS[value], SHORT_VERDICTS[value]]
     texts = []
     for factor, decimals, symbol in WRITTEN[key.split(".")[-1]]:
-        # ECMA-402 rounds halves away from zero.
-        number = Decimal(value * factor).quantize(Decimal(1).scaleb(-decimals), ROUND_HALF_UP)
+        # ECMA-402 rounds halves away from zero; a chance is shown no better than it is.
+        safe = key.endswith("chance_holds")
+        number = Decimal(value * factor + (1e-6 if safe else 0)).quantize(
+            Decimal(1).scaleb(-decimals), ROUND_FLOOR if safe else ROUND_HALF_UP)
         sign = "+" if key.endswith("overhang_m") and number > 0 else ""
         texts.append((f"{sign}{number}" if number else f"{abs(number)}").replace("-", "−") + symbol)
     return texts

@@ -11,8 +11,9 @@ from pathlib import Path
 from typing import Any
 
 import pytest
-from conftest import PHONE, START_MS, Host, wait_offline, wait_ready
 from playwright.sync_api import Browser, BrowserContext, Locator, Page, expect
+
+from conftest import PHONE, START_MS, Host, wait_offline, wait_ready
 
 OWN = ("speed_mps", "fall_at_m", "clothing_friction", "drag_area_m2", "altitude_m",
        "air_temperature_c", "braking_friction", "reaction_time_s", "sight_distance_m", "waist_m")

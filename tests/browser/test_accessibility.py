@@ -6,9 +6,10 @@ import re
 from collections.abc import Iterator
 
 import pytest
-from conftest import PHONE, ROOT, Host
 from playwright.sync_api import Browser, Page, expect
 from turn_page import drag, open_turn, set_typed, settled
+
+from conftest import PHONE, ROOT, Host
 
 AXE = (ROOT / "web/node_modules/axe-core/axe.min.js").read_text("utf-8")
 LOOKS = ("light", "dark", "glare")

@@ -10,7 +10,6 @@ import subprocess
 import zlib
 
 import pytest
-from conftest import PHONE, wait_ready
 from pitch_page import (  # noqa: F401
     DEMO,
     coded,
@@ -27,6 +26,7 @@ from pitch_page import (  # noqa: F401
 from playwright.sync_api import expect
 
 import snowhold
+from conftest import PHONE, wait_ready
 
 
 def test_state_survives_a_closed_tab_and_works_offline(pitch, installed):

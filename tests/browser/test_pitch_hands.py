@@ -5,9 +5,10 @@
 from __future__ import annotations
 
 import pytest
-from conftest import PHONE, ROOT, START_MS
 from pitch_page import field, installed, pitch, set_slope, set_typed  # noqa: F401
 from playwright.sync_api import Page, expect
+
+from conftest import PHONE, ROOT, START_MS
 
 AXE = (ROOT / "web/node_modules/axe-core/axe.min.js").read_text("utf-8")
 LOOKS = ("light", "dark", "glare")

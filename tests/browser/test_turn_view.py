@@ -6,7 +6,6 @@ import re
 from collections.abc import Callable, Iterator
 
 import pytest
-from conftest import PHONE, START_MS, Host, wait_ready
 from playwright.sync_api import Browser, BrowserContext, Page, expect
 from turn_page import (
     IMPERIAL,
@@ -24,6 +23,7 @@ from turn_page import (
 )
 
 import snowhold
+from conftest import PHONE, START_MS, Host, wait_ready
 
 
 @pytest.fixture(scope="module")

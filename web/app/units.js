@@ -12,6 +12,7 @@ import { formatNumber, t } from './text.js';
  * @property {(shown: number) => number} read back
  * @property {number} decimals decimals of a shown result
  * @property {number} step one nudge of an input
+ * @property {'up'|'down'} [toward] the safe side, to which a result is rounded; else to the nearest
  */
 
 const factor = (label, perSi, decimals, step) => ({
@@ -58,7 +59,11 @@ const KINDS = {
   },
   stiffness: { nm2: factor('unit.nm2', 1, 0, 10) },
   load: { g: factor('unit.g', 1, 2, 0.1) },
-  share: { percent: factor('unit.percent', 100, 0, 1) },
+  // Nobody should read more grip, or a tighter line, than there is.
+  share: { percent: { ...factor('unit.percent', 100, 0, 1), toward: 'down' } },
+  tightest: {
+    m: { ...factor('unit.m', 1, 1, 0.5), toward: 'up' }, ft: { ...factor('unit.ft', 1 / 0.3048, 0, 1), toward: 'up' },
+  },
   percent: { percent: factor('unit.percent', 1, 0, 1) },
   // Along a slope metres are enough.
   slope: { m: factor('unit.m', 1, 0, 5), ft: factor('unit.ft', 1 / 0.3048, 0, 10) },
@@ -67,7 +72,7 @@ const KINDS = {
   reaction: { s: factor('unit.s', 1, 1, 0.1) },
   temperature: { c: factor('unit.c', 1, 0, 1) },
   dragArea: { m2: factor('unit.m2', 1, 2, 0.05) },
-  hundred: { count: factor('unit.inHundred', 100, 0, 1) },
+  hundred: { count: { ...factor('unit.inHundred', 100, 0, 1), toward: 'down' } },
   fineAngle: { deg: factor('unit.deg', 1, 1, 1) },
   time: { s: factor('unit.s', 1, 1, 1) },
   distance: { m: factor('unit.m', 1, 0, 10), ft: factor('unit.ft', 1 / 0.3048, 0, 10) },
@@ -91,7 +96,7 @@ export const DEFAULT_UNITS = { speed: 'kmh', pitch: 'deg', length: 'm', board: '
 /** Kinds that follow the choice of another. */
 const FOLLOWS = {
   width: 'board', along: 'board', small: 'board', slope: 'length', altitude: 'length',
-  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed', wholeSpeed: 'speed', distance: 'length',
+  edge: 'length', depth: 'length', mass: 'length', speedWindow: 'speed', bareSpeed: 'speed', wholeSpeed: 'speed', distance: 'length', tightest: 'length',
 };
 
 /**
@@ -120,8 +125,15 @@ export function symbol(unit) {
 export function show(kind, value, units, { signed = false } = {}) {
   if (value === null || value === undefined) return '–';
   const unit = unitOf(kind, units);
-  const number = formatNumber(unit.show(value), { decimals: unit.decimals, signed });
+  const number = formatNumber(rounded(unit.show(value), unit), { decimals: unit.decimals, signed });
   return BARE.includes(kind) ? number : number + symbol(unit);
+}
+
+/** To the safe side, where a unit has one; what is off by rounding alone is not moved a whole step. */
+function rounded(shown, { toward, decimals }) {
+  if (!toward) return shown;
+  const steps = shown * 10 ** decimals;
+  return (toward === 'up' ? Math.ceil(steps - 1e-6) : Math.floor(steps + 1e-6)) / 10 ** decimals;
 }
 
 /**

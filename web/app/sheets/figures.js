@@ -17,7 +17,7 @@ const WORST = [
   ['figure.penetration', 'depth', 'worst.penetration_m'],
 ];
 const DRIFT = [
-  ['figure.radius', 'length', 'drift.line_radius_m'],
+  ['figure.radius', 'tightest', 'drift.line_radius_m'],
   ['figure.lean', 'angle', 'drift.lean_deg'],
   ['figure.edge', 'angle', 'drift.edge_angle_deg'],
   ['figure.margin', 'share', 'drift.grip_margin'],

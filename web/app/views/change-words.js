@@ -5,7 +5,7 @@ import { show, symbol, unitOf } from '../units.js';
 
 /** Kind of quantity of each input. */
 const KINDS = {
-  speed_mps: 'speedWindow', pitch_deg: 'pitch', angulation_deg: 'angle', sidecut_radius_m: 'length', line_radius_m: 'length',
+  speed_mps: 'speedWindow', pitch_deg: 'pitch', angulation_deg: 'angle', sidecut_radius_m: 'length', line_radius_m: 'tightest',
 };
 
 /**

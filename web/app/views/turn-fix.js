@@ -11,7 +11,7 @@ import { applyChange, changeWords } from './change-words.js';
  * @param {() => void} given.onList opens the list of all changes
  */
 export function createFix({ store, onList }) {
-  const figure = createFigure('length');
+  const figure = createFigure('tightest');
   const [before, after] = [el('span'), el('span')];
   const node = el('button', { type: 'button', class: 'fix', hidden: true, on: { click: pressed } }, before, figure.node, after);
   /** The change that a press makes; null: it opens the list. */

@@ -72,7 +72,7 @@ export function createTurnPictures({ onPick }) {
       words: { lean: t('picture.lean'), edge: t('picture.edge'), force: t('picture.force'),
         limit: shown.limit ? t(`limit.${shown.limit}`) : '', none: t('picture.noBalance') },
     }, size.section);
-    const radius = answer.drift && show('length', answer.drift.line_radius_m, units);
+    const radius = answer.drift && show('tightest', answer.drift.line_radius_m, units);
     above.update({
       path: shown.path, states: shown.states, phases: shown.phases, index: shown.index,
       other: shown.other, otherKind: shown.drifts ? 'own' : 'wider', markIndex: shown.failIndex,

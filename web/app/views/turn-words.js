@@ -15,7 +15,7 @@ export function caption(shown, answer, units) {
   const phase = show('angle', shown.phaseDeg, units);
   if (shown.picked) return t('picture.at', { phase, zone: t(`zone.${shown.zone}`) });
   if (shown.drifts) {
-    return t('picture.atDrift', { phase, radius: show('length', answer.drift.line_radius_m, units) });
+    return t('picture.atDrift', { phase, radius: show('tightest', answer.drift.line_radius_m, units) });
   }
   if (shown.leanDeg === null) return t('picture.at', { phase, zone: t(`zone.${zoneOf(shown.phaseDeg)}`) });
   return t(shown.zone === 'whole' ? 'picture.atWhole' : 'picture.atWorst', { phase, zone: t(`zone.${shown.zone}`) });
