@@ -315,9 +315,9 @@ def test_before_numpy_is_there_it_waits_without_an_error(new_context, site):
     set_typed(page, waist_m="31")
     expect(page.locator(".board-view .error:visible")).to_have_count(1)
     set_typed(page, waist_m="25.3")
-    context.unroute("**/numpy*")
     for route in held:
         route.continue_()
+    context.unroute("**/numpy*")
     settled(page)
     host.stop()
 
@@ -399,7 +399,7 @@ def test_targets_and_no_sideways_scrolling(board, size, percent):
                 '.field, .verdict-word, dd, label, .unit, [role=cell]')]
             .filter((node) => node.checkVisibility() && node.scrollWidth > node.clientWidth + 1
                 && getComputedStyle(node).display !== 'inline')
-            .map((node) => `${node.className} ${node.textContent}`)"""))
+            .map((node) => `${node.id} ${node.className} ${node.textContent}`)"""))
 
     look("page")
     for sheet, name in SHEETS.items():

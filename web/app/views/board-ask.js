@@ -31,6 +31,12 @@ export function createBoardAsker({ store, engine, comparing, onChange }) {
     const { usual_speed_mps: own } = boardOf(state).riding;
     const questions = { boards: boardsQuestion(state, comparing()) };
     try {
+      if (!engine.arrays) {
+        // Nothing can be told yet but what is wrong with the entries.
+        const refused = await engine.ask('board', boardQuestion(state, own));
+        if (refused?.error && mine === asked) failed(refused.error);
+        return;
+      }
       const boards = await engine.ask('boards', questions.boards);
       if (boards === null || mine !== asked) return;
       if (boards.error) return failed(ofOpenBoard(boards.error));
@@ -41,8 +47,7 @@ export function createBoardAsker({ store, engine, comparing, onChange }) {
       if (board.error) return failed(board.error);
       errors = [];
       settled = true;
-      const names = comparing();
-      store.set({ answers: { board: { answer: board, boards, questions, all: names } } });
+      store.set({ answers: { board: { answer: board, boards, questions, all: comparing() } } });
     } catch {
       // The engine has failed; main.js hears of it and has the view updated.
     }
