@@ -45,7 +45,7 @@ apt_install() {
 make_venv() {
     say "making the Python environment .venv"
     rm -rf .venv
-    python3 -m venv .venv 2>/dev/null || {
+    python3 -m venv .venv >/dev/null 2>&1 || {
         rm -rf .venv
         apt_install python3-venv
         python3 -m venv .venv
@@ -73,7 +73,11 @@ build() {
 
 install_for_build() {
     command -v python3 >/dev/null || apt_install python3 python3-venv
+    python3 -c 'import sys; sys.exit(sys.version_info < (3, 11))' \
+        || fail "Python 3.11 or newer is needed; python3 here is $(python3 --version)"
     command -v npm >/dev/null || fail "please install Node.js 20 or newer with npm"
+    node -e 'process.exit(parseInt(process.versions.node) < 20 ? 1 : 0)' \
+        || fail "Node.js 20 or newer is needed; node here is $(node --version)"
     .venv/bin/python -m pip --version >/dev/null 2>&1 || make_venv
     once .venv/build.stamp scripts/requirements.txt pip_install scripts/requirements.txt
     once web/node_modules/.stamp "web/package.json web/package-lock.json" npm_install

@@ -1,17 +1,14 @@
 """The runtime: fetched whole or not at all; the same answers as on a desktop; no silent end."""
 
 import hashlib
-import json
-import math
-import random
 import shutil
 import subprocess
 import sys
 
 import pytest
+from same_answers import check_alike, questions
 
-import snowhold
-from conftest import ROOT, load_script, wait_arrays, wait_ready
+from conftest import ROOT, load_script, wait_arrays
 
 fetch_runtime = load_script("fetch_runtime.py")
 
@@ -86,86 +83,6 @@ def test_the_installed_runtime_is_the_pinned_one(site):
     assert again.stderr == ""
 
 
-# Drives the worker's own file, as the page's engine.js does.
-ASK_ALL = """async ([url, questions, wanted]) => {
-    const worker = new Worker(url, { type: 'module' });
-    const answers = [];
-    await new Promise((resolve, reject) => {
-        worker.onerror = reject;
-        worker.onmessage = ({ data }) => {
-            if (data.state === 'failed') reject(new Error(data.message));
-            if (data.failure) reject(new Error(data.failure));
-            if (data.state === wanted) {
-                questions.forEach((question, id) => worker.postMessage({ id, question }));
-            }
-            if ('answer' in data) answers[data.id] = data.answer;
-            if (data.id === questions.length - 1) resolve();
-        };
-    });
-    worker.terminate();
-    return answers;
-}"""
-
-
-def questions(count):
-    """Turns over the whole range of what may be asked, the same ones each time."""
-    rng = random.Random(20131)
-    made = []
-    for _ in range(count):
-        question = {
-            "ask": "turn",
-            "pitch_deg": rng.uniform(0, 50),
-            "speed_mps": rng.uniform(0, 40),
-            "sidecut_radius_m": rng.uniform(3, 40),
-        }
-        if rng.random() < 0.7:  # speeds that people ride
-            question["speed_mps"] = rng.uniform(2, 12)
-            question["pitch_deg"] = rng.uniform(0, 30)
-        if rng.random() < 0.5:
-            question |= {"snow": rng.choice(["F", "4F", "1F", "P", "K", "I"]),
-                         "angulation_deg": rng.uniform(0, 20),
-                         "rider_mass_kg": rng.uniform(30, 120)}
-        if rng.random() < 0.3:
-            question["phase_deg"] = rng.uniform(0, 180)
-        if rng.random() < 0.3:
-            question["line_radius_m"] = rng.uniform(5, 40)
-        made.append(question)
-    made.append({"ask": "turn", "pitch_deg": -1, "speed_mps": "fast"})
-    return made
-
-
-def differences(a, b, path="answer"):
-    """Where two answers differ by more than 1e-12 (relative, or absolute below 1)."""
-    if isinstance(a, dict) and isinstance(b, dict) and a.keys() == b.keys():
-        return [d for key in a for d in differences(a[key], b[key], f"{path}.{key}")]
-    if isinstance(a, list) and isinstance(b, list) and len(a) == len(b):
-        return [d for i, (x, y) in enumerate(zip(a, b, strict=True))
-                for d in differences(x, y, f"{path}[{i}]")]
-    numbers = (int, float)
-    if isinstance(a, numbers) and isinstance(b, numbers) and not isinstance(a, bool):
-        same = math.isclose(a, b, rel_tol=1e-12, abs_tol=1e-12)
-    else:
-        same = a == b
-    return [] if same else [f"{path}: {a!r} here, {b!r} in the browser"]
-
-
-def check_alike(page, asked, stage, monkeypatch):
-    """The browser, before or after numpy has joined, answers as CPython here without it or with."""
-    replies = page.evaluate(ASK_ALL, [page.workers[0].url, [json.dumps(q) for q in asked], stage])
-    with monkeypatch.context() as patch:
-        if stage == "ready":
-            patch.setitem(sys.modules, "numpy", None)
-        for question, reply in zip(asked, replies, strict=True):
-            assert differences(snowhold.answer(question), json.loads(reply)) == [], question
-
-
-@pytest.mark.parametrize("stage", ["ready", "arrays"])
-def test_browser_and_desktop_answer_alike(host, page, stage, monkeypatch):
-    page.goto(host.url)
-    wait_ready(page)
-    check_alike(page, questions(200), stage, monkeypatch)
-
-
 SNAPSHOT = """async (change) => {
     const cache = await caches.open('engine-start');
     const [key] = await cache.keys();
@@ -175,9 +92,8 @@ SNAPSHOT = """async (change) => {
     const bytes = new Uint8Array(await found.arrayBuffer());
     const length = bytes.length;
     if (change === 'foreign') bytes.fill(7, 0, 64);
-    if (change) {
-        await cache.put(key, new Response(change === 'cut' ? bytes.slice(0, 1e6) : bytes, { headers }));
-    }
+    const changed = change === 'cut' ? bytes.slice(0, 1e6) : bytes;
+    if (change) await cache.put(key, new Response(changed, { headers }));
     return length;
 }"""
 
