@@ -180,7 +180,7 @@ def test_knowing_better_changes_the_chance(turn):
     expect(figure).to_have_text(f"{math.floor(surer['chance_holds'] * 100 + 1e-6)}\u202fin 100",
                                 timeout=15_000)
     label = found.get_by_role("img", name="Grip margin along the turn").get_attribute("aria-label")
-    last = f"{surer['margin_band']['high'][-1] * 100:+.0f}".replace("-", "−")
+    last = f"{math.floor(surer['margin_band']['high'][-1] * 100 + 1e-6):+d}".replace("-", "−")
     assert f"to {last}" in plain(label or "")
     found.get_by_role("button", name="Back to the assumed").click()
     expect(entry).to_have_value("3")

@@ -81,9 +81,10 @@ const KINDS = {
 
 KINDS.bareSpeed = KINDS.speedWindow;
 KINDS.bareHundred = KINDS.hundred;
+KINDS.partOfHundred = { count: factor('unit.inHundred', 100, 0, 1) };
 KINDS.wholeSpeed = KINDS.speed;
 /** Kinds whose unit stands beside them already. */
-const BARE = ['bareSpeed', 'wholeSpeed', 'bareHundred'];
+const BARE = ['bareSpeed', 'wholeSpeed', 'bareHundred', 'partOfHundred'];
 
 /** What the settings offer. */
 export const CHOICES = { speed: ['kmh', 'mph', 'ms'], pitch: ['deg', 'percent'], length: ['m', 'ft'], board: ['cm', 'mm', 'in'] };

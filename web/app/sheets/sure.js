@@ -22,7 +22,7 @@ export function createSureSheet({ store, echo, reference }) {
   const lead = el('p', { class: 'lead', hidden: true }, before, chance.node, after);
   const waiting = el('p', { text: t('sure.waiting') });
   const onLine = el('p', { class: 'aside' });
-  const shares = STATES.map((state) => ({ state, figure: createFigure('bareHundred') }));
+  const shares = STATES.map((state) => ({ state, figure: createFigure('partOfHundred') }));
   const list = el('dl', { class: 'rows shares' }, ...shares.map(({ state, figure }) =>
     el('div', { class: 'row' }, el('dt', { text: t(`state.${state}`) }), el('dd', {}, figure.node))));
   const band = createBand();
@@ -67,7 +67,7 @@ export function createSureSheet({ store, echo, reference }) {
         setAttribute(one, 'data-old', full.old);
       }
       setShown(onLine, full.lineM !== null);
-      if (full.lineM !== null) setText(onLine, t('sure.onLine', { radius: show('length', full.lineM, units) }));
+      if (full.lineM !== null) setText(onLine, t('sure.onLine', { radius: show('tightest', full.lineM, units) }));
       setAttribute(lead, 'data-old', full.old);
       if (!answer) return;
       const [start, end = ''] = t('sure.lead').split('{chance}');
