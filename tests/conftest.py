@@ -8,6 +8,7 @@ import os
 import shutil
 import subprocess
 from collections.abc import Callable, Iterator
+from contextlib import contextmanager
 from pathlib import Path
 from types import ModuleType
 from typing import Any
@@ -147,6 +148,21 @@ def phone(new_context: Callable[..., BrowserContext]) -> BrowserContext:
 def page(phone: BrowserContext) -> Page:
     """A blank page on a phone."""
     return phone.new_page()
+
+
+@contextmanager
+def first_visit(context: BrowserContext, url: str) -> Iterator[Page]:
+    """A page as on a first visit, nothing kept, not yet opened; it must end without an error."""
+    page = context.new_page()
+    errors: list[str] = []
+    page.on("pageerror", lambda error: errors.append(str(error)))
+    page.goto(f"{url}manifest.webmanifest")
+    page.evaluate("""() => new Promise((done) => {
+        indexedDB.deleteDatabase('keyval-store').onsuccess = done;
+    })""")
+    yield page
+    page.close()
+    assert errors == []
 
 
 def wait_ready(page: Page) -> None:

@@ -13,7 +13,7 @@ from typing import Any
 import pytest
 from playwright.sync_api import Browser, BrowserContext, Locator, Page, expect
 
-from conftest import PHONE, START_MS, Host, wait_offline, wait_ready
+from conftest import PHONE, START_MS, Host, first_visit, wait_offline, wait_ready
 
 OWN = ("speed_mps", "fall_at_m", "clothing_friction", "drag_area_m2", "altitude_m",
        "air_temperature_c", "braking_friction", "reaction_time_s", "sight_distance_m", "waist_m")
@@ -169,15 +169,9 @@ def installed(browser: Browser, site: Path) -> Iterator[tuple[BrowserContext, st
 def pitch(installed) -> Iterator[Page]:
     """The Pitch view as on a first visit: nothing kept."""
     context, url, _ = installed
-    page = context.new_page()
-    errors: list[str] = []
-    page.on("pageerror", lambda error: errors.append(str(error)))
-    page.goto(f"{url}manifest.webmanifest")
-    page.evaluate("""() => new Promise((done) => {
-        indexedDB.deleteDatabase('keyval-store').onsuccess = done;
-    })""")
-    page.on("console", lambda said: errors.append(said.text) if said.type == "error" else None)
-    open_pitch(page, url)
-    yield page
-    page.close()
-    assert errors == []
+    with first_visit(context, url) as page:
+        said: list[str] = []
+        page.on("console", lambda one: said.append(one.text) if one.type == "error" else None)
+        open_pitch(page, url)
+        yield page
+        assert said == []

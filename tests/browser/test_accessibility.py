@@ -6,13 +6,12 @@ import re
 from collections.abc import Iterator
 
 import pytest
+from axe import LOOKS, look_like, violations
 from playwright.sync_api import Browser, Page, expect
 from turn_page import drag, open_turn, set_typed, settled
 
-from conftest import PHONE, ROOT, Host
+from conftest import PHONE, Host
 
-AXE = (ROOT / "web/node_modules/axe-core/axe.min.js").read_text("utf-8")
-LOOKS = ("light", "dark", "glare")
 SHEETS = {"snow": re.compile("^Snow"), "rider": re.compile("^Rider"), "figures": "Figures",
           "settings": re.compile("^Settings"), "caution": re.compile("estimate|avalanche")}
 # Pitch and speed (km/h) of a turn in each verdict, on firm snow with the usual rider.
@@ -30,23 +29,6 @@ def turn(browser: Browser, site) -> Iterator[Page]:
     yield page
     context.close()
     host.stop()
-
-
-def look_like(page: Page, look: str) -> None:
-    page.get_by_role("button", name=re.compile("^Settings")).click()
-    page.get_by_role("radio", name=look).check()
-    page.keyboard.press("Escape")
-    expect(page.locator("html")).to_have_attribute("data-look", look)
-
-
-def violations(page: Page, *extra: str) -> list[str]:
-    """What axe-core finds, by rule and element; ``extra``: rules that are off by default."""
-    page.evaluate(f"() => {{ if (!window.axe) {{ {AXE} }} }}")
-    found = page.evaluate("""async (extra) => (await axe.run(document, {
-        rules: Object.fromEntries(extra.map((rule) => [rule, { enabled: true }])),
-    })).violations""", list(extra))
-    return [f"{one['id']}: {node['target']} {node['failureSummary']}"
-            for one in found for node in one["nodes"]]
 
 
 @pytest.mark.parametrize("look", LOOKS)

@@ -8,6 +8,7 @@ from collections.abc import Iterator
 from typing import Any
 
 import pytest
+from axe import LOOKS, look_like, violations
 from board_page import (
     BOARD,
     BOOT,
@@ -28,10 +29,8 @@ from board_page import (
 from playwright.sync_api import Browser, BrowserContext, Page, expect
 
 import snowhold
-from conftest import PHONE, ROOT, Host, wait_ready
+from conftest import PHONE, Host, first_visit, wait_ready
 
-AXE = (ROOT / "web/node_modules/axe-core/axe.min.js").read_text("utf-8")
-LOOKS = ("light", "dark", "glare")
 SHEETS = {"boots": "Boots", "bend": "Stiffness", "measure": "Measures", "compare": "Compare",
           "board-rider": "Rider", "board-snow": "Snow"}
 
@@ -54,18 +53,9 @@ def installed(browser: Browser, site) -> Iterator[tuple[BrowserContext, str]]:
 @pytest.fixture
 def board(installed) -> Iterator[Page]:
     """The Board view as on a first visit: nothing kept."""
-    context, url = installed
-    page = context.new_page()
-    errors: list[str] = []
-    page.on("pageerror", lambda error: errors.append(str(error)))
-    page.goto(f"{url}manifest.webmanifest")
-    page.evaluate("""() => new Promise((done) => {
-        indexedDB.deleteDatabase('keyval-store').onsuccess = done;
-    })""")
-    open_board(page, url)
-    yield page
-    page.close()
-    assert errors == []
+    with first_visit(*installed) as page:
+        open_board(page, installed[1])
+        yield page
 
 
 def test_the_main_job_by_touch(board):
@@ -334,22 +324,6 @@ def test_works_without_a_network(installed, board):
         shows(board, board_question(changed), boards_question(changed, changed))
     finally:
         context.set_offline(False)
-
-
-def look_like(page: Page, look: str) -> None:
-    page.get_by_role("button", name="Settings", exact=True).click()
-    page.get_by_role("radio", name=look).check()
-    page.keyboard.press("Escape")
-    expect(page.locator("html")).to_have_attribute("data-look", look)
-
-
-def violations(page: Page, *extra: str) -> list[str]:
-    page.evaluate(f"() => {{ if (!window.axe) {{ {AXE} }} }}")
-    found = page.evaluate("""async (extra) => (await axe.run(document, {
-        rules: Object.fromEntries(extra.map((rule) => [rule, { enabled: true }])),
-    })).violations""", list(extra))
-    return [f"{one['id']}: {node['target']} {node['failureSummary']}"
-            for one in found for node in one["nodes"]]
 
 
 @pytest.mark.parametrize("look", LOOKS)

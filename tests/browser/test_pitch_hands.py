@@ -5,30 +5,11 @@
 from __future__ import annotations
 
 import pytest
+from axe import LOOKS, look_like, violations
 from pitch_page import field, installed, pitch, set_slope, set_typed  # noqa: F401
-from playwright.sync_api import Page, expect
+from playwright.sync_api import expect
 
-from conftest import PHONE, ROOT, START_MS
-
-AXE = (ROOT / "web/node_modules/axe-core/axe.min.js").read_text("utf-8")
-LOOKS = ("light", "dark", "glare")
-
-
-def violations(page: Page, *extra: str) -> list[str]:
-    page.evaluate(f"() => {{ if (!window.axe) {{ {AXE} }} }}")
-    found = page.evaluate("""async (extra) => (await axe.run(document, {
-        rules: Object.fromEntries(extra.map((rule) => [rule, { enabled: true }])),
-    })).violations""", list(extra))
-    return [f"{one['id']}: {node['target']} {node['failureSummary']}"
-            for one in found for node in one["nodes"]]
-
-
-def look_like(page: Page, look: str) -> None:
-    page.get_by_role("button", name="Settings", exact=True).click()
-    page.get_by_role("radio", name=look).check()
-    page.keyboard.press("Escape")
-    expect(page.locator("html")).to_have_attribute("data-look", look)
-
+from conftest import PHONE, START_MS
 
 SHEETS = {"pitch-snow": "Snow, firm", "pitch-rider": "Rider", "pitch-figures": "More Figures",
           "pitch-leg": "More on leg", "card": "Show Card"}

@@ -11,14 +11,13 @@ import re
 from collections.abc import Iterator
 
 import pytest
+from axe import LOOKS, look_like, violations
 from playwright.sync_api import Browser, Page, expect
 from turn_page import START, field, open_turn, plain, set_typed, settled, slider
 
 import snowhold
-from conftest import PHONE, ROOT, Host, wait_arrays
+from conftest import PHONE, Host, wait_arrays
 
-AXE = (ROOT / "web/node_modules/axe-core/axe.min.js").read_text("utf-8")
-LOOKS = ("light", "dark", "glare")
 SHEETS = ("changes", "sure", "window", "line", "run")
 
 
@@ -385,22 +384,6 @@ def test_a_run_over_several_pitches(turn):
     steep.press("Enter")
     found.get_by_role("radio", name="Pitch as in the Turn view").check()
     done(turn)
-
-
-def look_like(page: Page, look: str) -> None:
-    page.get_by_role("button", name="Settings").click()
-    page.get_by_role("radio", name=look).check()
-    page.keyboard.press("Escape")
-    expect(page.locator("html")).to_have_attribute("data-look", look)
-
-
-def violations(page: Page, *extra: str) -> list[str]:
-    page.evaluate(f"() => {{ if (!window.axe) {{ {AXE} }} }}")
-    found = page.evaluate("""async (extra) => (await axe.run(document, {
-        rules: Object.fromEntries(extra.map((rule) => [rule, { enabled: true }])),
-    })).violations""", list(extra))
-    return [f"{one['id']}: {node['target']} {node['failureSummary']}"
-            for one in found for node in one["nodes"]]
 
 
 SMALL_TARGETS = """() => [...document.querySelectorAll(

@@ -23,7 +23,7 @@ from turn_page import (
 )
 
 import snowhold
-from conftest import PHONE, START_MS, Host, wait_ready
+from conftest import PHONE, START_MS, Host, first_visit, wait_ready
 
 
 @pytest.fixture(scope="module")
@@ -43,18 +43,9 @@ def installed(browser: Browser, site) -> Iterator[tuple[BrowserContext, str]]:
 @pytest.fixture
 def turn(installed) -> Iterator[Page]:
     """The Turn view as on a first visit: nothing kept."""
-    context, url = installed
-    page = context.new_page()
-    errors: list[str] = []
-    page.on("pageerror", lambda error: errors.append(str(error)))
-    page.goto(f"{url}manifest.webmanifest")
-    page.evaluate("""() => new Promise((done) => {
-        indexedDB.deleteDatabase('keyval-store').onsuccess = done;
-    })""")
-    open_turn(page, url)
-    yield page
-    page.close()
-    assert errors == []
+    with first_visit(*installed) as page:
+        open_turn(page, installed[1])
+        yield page
 
 
 def test_the_main_job_by_touch(turn):
