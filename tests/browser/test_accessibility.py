@@ -93,6 +93,7 @@ def test_targets_are_made_for_gloves(turn, size):
                          ids=lambda size: f"{size[0]}x{size[1]}")
 def test_nothing_needs_sideways_scrolling(turn, size, look, percent):
     look_like(turn, look)
+    set_typed(turn, pitch_deg="18.5", speed_mps="123.4")
     turn.set_viewport_size({"width": size[0], "height": size[1]})
     turn.evaluate("(size) => { document.documentElement.style.fontSize = size; }", f"{percent}%")
     wide = [turn.evaluate("document.documentElement.scrollWidth")]
