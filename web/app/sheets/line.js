@@ -79,7 +79,7 @@ export function createLineSheet({ store, echo }) {
       const { answer } = kept;
       const offered = answer.drift && !['holds', 'too_slow'].includes(answer.verdict) && Math.abs((inputs.line_radius_m ?? 0) - answer.drift.line_radius_m) > 0.01;
       setShown(offer, Boolean(offered));
-      if (offered) setText(offer, t('line.offer', { radius: show('length', answer.drift.line_radius_m, units) }));
+      if (offered) setText(offer, t('line.offer', { radius: show('tightest', answer.drift.line_radius_m, units) }));
 
       const pivots = answer.phase_deg.filter((_, i) => answer.pivoted[i]);
       setShown(pivoted, pivots.length > 0);

@@ -108,7 +108,7 @@ export function createRunSheet({ store, engine, onChange }) {
       for (const one of [noSpeed, noSpeedWhy]) setShown(one, carves && Boolean(steep));
       line = carves ? kept?.answer.drift?.line_radius_m ?? null : null;
       setShown(drift, !carves || line !== null);
-      setText(drift, carves ? t('run.drift', { radius: show('length', line, units) }) : t('run.carve'));
+      setText(drift, carves ? t('run.drift', { radius: show('tightest', line, units) }) : t('run.carve'));
       setShown(friction, answer.cautions.includes('drift_friction'));
       for (const { figure, key } of rows) figure.update(answer, key, units);
       const spans = spansOf(answer.path, units);
