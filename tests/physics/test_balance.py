@@ -11,6 +11,7 @@ from snowhold.balance import (
     lean_rad,
     load_g,
     normal_force_n,
+    section_tilt_rad,
     track_acceleration_mps2,
 )
 
@@ -83,3 +84,18 @@ def test_straight_glide_is_the_inclined_plane():
     acceleration = track_acceleration_mps2(0, math.radians(30), math.pi / 2,
                                            math.cos(math.radians(30)), 0.1, 0.0)
     assert acceleration == pytest.approx(9.80665 * (0.5 - 0.1 * math.sqrt(3) / 2))
+
+
+@given(PITCHES, PHASES)
+def test_section_tilt_is_where_gravity_points(pitch_rad, phase_rad):
+    """Gravity projected into the plane of the radius and the snow's perpendicular, by vectors in
+    space; the angle between it and the perpendicular is how the snow is tilted there."""
+    down = (0.0, math.cos(pitch_rad), -math.sin(pitch_rad))
+    normal = (0.0, math.sin(pitch_rad), math.cos(pitch_rad))
+    centre = [-math.sin(phase_rad) * (i == 0) + math.cos(phase_rad) * down[i] for i in range(3)]
+    gravity = (0.0, 0.0, -1.0)
+    along = sum(g * c for g, c in zip(gravity, centre, strict=True))
+    into = -sum(g * n for g, n in zip(gravity, normal, strict=True))
+    assert section_tilt_rad(pitch_rad, phase_rad) == pytest.approx(-math.atan2(along, into),
+                                                                   abs=1e-12)
+    assert section_tilt_rad(pitch_rad, math.pi) == pytest.approx(pitch_rad)

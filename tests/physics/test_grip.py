@@ -14,6 +14,7 @@ from snowhold.grip import (
     clearance_angle_rad,
     grip_margin,
     least_capacity,
+    limit_lean_rad,
     penetration_m,
     platform_capacity_n,
     rider_capacity_n,
@@ -147,3 +148,11 @@ def test_needed_force_and_capacity_share_one_balance():
     edge = math.atan2(needed_n, normal_n) + math.radians(5)
     assert grip_margin(platform_capacity_n(normal_n, edge), needed_n) == pytest.approx(
         math.tan(edge) / (needed_n / normal_n) - 1)
+
+
+@given(st.floats(1, 70), st.floats(0, 15), st.sampled_from(sorted(SNOWS)))
+def test_at_the_limit_lean_the_margin_is_used_up(lean_deg, angulation_deg, snow):
+    """The same edge, leant on until it gives: the four limits evaluated there leave nothing."""
+    got, _ = margin(lean_deg, lean_deg + angulation_deg, snow)
+    limit_deg = math.degrees(limit_lean_rad(math.radians(lean_deg), got))
+    assert margin(limit_deg, lean_deg + angulation_deg, snow)[0] == pytest.approx(0, abs=1e-9)

@@ -44,6 +44,15 @@ def load_g(lean_rad: Value, pitch_rad: Value, xp: Namespace = scalars) -> Value:
     return xp.cos(pitch_rad) / xp.cos(lean_rad)
 
 
+def section_tilt_rad(pitch_rad: Value, phase_rad: Value, xp: Namespace = scalars) -> Value:
+    """How the snow rises toward the turn's centre in the section across the turn, rad.
+
+    −atan(tan α cos φ): gravity as seen in the plane of the radius and the snow's perpendicular is
+    straight down there. Its size is the pitch at the turn's ends, 0 on the fall line.
+    """
+    return -xp.atan(xp.tan(pitch_rad) * xp.cos(phase_rad))
+
+
 def track_acceleration_mps2(speed_mps: Value, pitch_rad: Value, phase_rad: Value, load_g: Value,
                             glide_friction: Value, drag_per_m: Value,
                             xp: Namespace = scalars) -> Value:

@@ -96,6 +96,12 @@ def grip_margin(capacity_n: Value, centre_force_n: Value) -> Value:
     return capacity_n / centre_force_n - 1
 
 
+def limit_lean_rad(lean_rad: Value, grip_margin: Value, xp: Namespace = scalars) -> Value:
+    """Lean at which this edge would give, rad: tan λ grown by the margin, at an unchanged force
+    square to the snow."""
+    return xp.atan((1 + grip_margin) * xp.tan(lean_rad))
+
+
 def state(grip_margin: float) -> str:
     """State of a balanced phase by its grip margin: holds, marginal or washes_out."""
     if grip_margin >= HOLDS_MARGIN:

@@ -65,6 +65,9 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
     * ``lean_deg``, ``edge_angle_deg``, ``turn_radius_m``, ``load_g``, ``penetration_m``.
     * ``grip_margin``, the ``limit`` that sets it (:data:`snowhold.grip.LIMITS`) and ``state``
       (:data:`snowhold.grip.STATES`).
+    * ``limit_lean_deg``: lean at which that edge would give. ``section_tilt_deg``: how the snow
+      rises toward the turn's centre in the section across the turn. ``zone``: above, on or below
+      the fall line.
     * ``pivoted``: the given line is tighter there than the tilted board carves.
     * ``least_edge_angle_deg``, ``drift_angle_deg``, ``groove_width_m``: how it drifts
       (:class:`snowhold.phases.Slip`).
@@ -102,7 +105,7 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
         **rows,
         "worst": {key: rows[key][worst] for key in (
             "phase_deg", "lean_deg", "edge_angle_deg", "turn_radius_m", "load_g",
-            "grip_margin", "limit", "state", "penetration_m")},
+            "grip_margin", "limit", "state", "penetration_m", "limit_lean_deg")},
         "first_fail_phase_deg": next(
             (phase for phase, at in zip(rows["phase_deg"], rows["state"], strict=True)
              if at not in ("holds", "marginal")), None),
@@ -188,7 +191,7 @@ def tightest_line(turn: Turn, catch_rad: float) -> dict[str, Any] | None:
     worst = min(loaded, key=lambda index: rows["grip_margin"][index])
     return {"line_radius_m": line_m, "bounded_by": bounded_by, **{key: rows[key][worst] for key in (
         "lean_deg", "edge_angle_deg", "load_g", "grip_margin", "limit", "phase_deg",
-        "least_edge_angle_deg", "drift_angle_deg", "groove_width_m")},
+        "least_edge_angle_deg", "drift_angle_deg", "groove_width_m", "limit_lean_deg")},
         "edge_catch_phases_deg": phases_under(rows, catch_rad)}
 
 

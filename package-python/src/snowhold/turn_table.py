@@ -6,7 +6,8 @@ from math import cos, degrees, isnan, radians, sin
 from typing import Any
 
 from snowhold.arrays import numpy_or_none
-from snowhold.grip import LIMITS, STATES, state
+from snowhold.balance import section_tilt_rad
+from snowhold.grip import LIMITS, STATES, limit_lean_rad, state
 from snowhold.hold import own_arc_m
 from snowhold.phases import Phases, Slip, Turn, ride, slip
 
@@ -25,6 +26,11 @@ def table(turn: Turn, phases_deg: list[float]) -> dict[str, list[Any]]:
                   for row, _ in rows],
         "state": [_state(row) for row, _ in rows],
         "penetration_m": [_or_none(row.penetration_m) for row, _ in rows],
+        "limit_lean_deg": [_deg_or_none(limit_lean_rad(row.lean_rad, row.grip_margin))
+                           for row, _ in rows],
+        "section_tilt_deg": [degrees(section_tilt_rad(turn.pitch_rad, radians(phase)))
+                             for phase in phases_deg],
+        "zone": [_zone(phase) for phase in phases_deg],
         "pivoted": [bool(row.pivoted) for row, _ in rows],
         "least_edge_angle_deg": [_deg_or_none(slips.least_edge_rad) for _, slips in rows],
         "drift_angle_deg": [_deg_or_none(slips.drift_angle_rad) for _, slips in rows],
@@ -73,14 +79,15 @@ def reason(rows: dict[str, list[Any]], worst: int) -> dict[str, Any]:
     """What the verdict rests on, as codes: state, limit and where in the turn."""
     same = [at == rows["state"][worst] for at in rows["state"]]
     steady = len({round(value or 0.0, 9) for value in rows["lean_deg"]}) == 1
-    phase_deg = rows["phase_deg"][worst]
-    if all(same) and steady:
-        zone = "whole"
-    elif phase_deg < 80:
-        zone = "above"
-    else:
-        zone = "on" if phase_deg <= 100 else "below"
+    zone = "whole" if all(same) and steady else rows["zone"][worst]
     return {"state": rows["state"][worst], "limit": rows["limit"][worst], "zone": zone}
+
+
+def _zone(phase_deg: float) -> str:
+    """Where a phase lies: within 10° of the fall line (assumed) is on it."""
+    if phase_deg < 80:
+        return "above"
+    return "on" if phase_deg <= 100 else "below"
 
 
 def path_m(turn: Turn, phases_deg: list[float]) -> dict[str, list[float]]:

@@ -9,27 +9,6 @@ import { svg, setAttribute, setAttributes, setShown, setText } from '../dom.js';
 import { arc, lengthToBorder, line, moved, polygon, sector, upward } from './geometry.js';
 import { riderShape } from './rider.js';
 
-const RADIANS = Math.PI / 180;
-
-/**
- * How the snow line of the section is inclined on the page, degrees, rising to the right.
- *
- * The section cuts the hill along the turn's radius. Gravity as seen in that plane is straight
- * down on the page; at the end of the turn the cut runs up the fall line and shows the full pitch,
- * heading down the fall line it runs across the hill and is level.
- */
-export function sectionTiltDeg(pitchDeg, phaseDeg) {
-  return -Math.atan(Math.tan(pitchDeg * RADIANS) * Math.cos(phaseDeg * RADIANS)) / RADIANS;
-}
-
-/**
- * Lean at which the edge would give, degrees: the force toward the centre may grow by the margin
- * before it does, at an unchanged force square to the snow.
- */
-function bearsToDeg(leanDeg, margin) {
-  return Math.atan(Math.tan(leanDeg * RADIANS) * (1 + margin)) / RADIANS;
-}
-
 export function createSection() {
   const part = (name) => svg('path', { class: name });
   const parts = {
@@ -53,20 +32,19 @@ export function createSection() {
 
   /**
    * @param {object} shown angles in degrees; `leanDeg` null where there is no balance
-   * @param {number} shown.pitchDeg
-   * @param {number} shown.phaseDeg
+   * @param {number} shown.tiltDeg how the snow rises to the right: gravity is straight down
    * @param {number|null} shown.leanDeg
    * @param {number|null} shown.edgeDeg
+   * @param {number|null} shown.limitDeg lean at which the edge would give
    * @param {number|null} shown.margin
    * @param {{lean: string, edge: string, force: string, limit: string, none: string}} shown.words
    * @param {{width: number, height: number, em: number}} size px
    */
-  function update({ pitchDeg, phaseDeg, leanDeg, edgeDeg, margin, words }, { width, height, em }) {
+  function update({ tiltDeg, leanDeg, edgeDeg, limitDeg, margin, words }, { width, height, em }) {
     setAttribute(node, 'viewBox', `0 0 ${width} ${height}`);
     const box = { left: 4, top: 4, right: width - 4, bottom: height - 4 };
     const foot = [width * 0.45, height * 0.55];
     const tall = Math.min(height * 0.51, width * 0.52);
-    const tiltDeg = sectionTiltDeg(pitchDeg, phaseDeg);
     /** An angle from the snow's perpendicular toward the centre as one from straight up. */
     const onPage = (deg) => deg - tiltDeg;
     const balanced = leanDeg !== null;
@@ -111,15 +89,14 @@ export function createSection() {
     setAttribute(parts.leanArc, 'd', arc(foot, leanRadius, onPage(0), onPage(lean)));
     setAttribute(parts.edgeArc, 'd', arc(foot, edgeRadius, onPage(-90), onPage(edge - 90)));
 
-    const bears = bearsToDeg(lean, margin);
     const force = upward(onPage(lean) + 180);
-    const limit = upward(onPage(bears) + 180);
+    const limit = upward(onPage(limitDeg) + 180);
     const reach = Math.min(tall, lengthToBorder(foot, force, box), lengthToBorder(foot, limit, box) - 6);
     const tip = moved(foot, [force, reach]);
     const neck = moved(foot, [force, reach - 12]);
     const aside = [force[1], -force[0]];
-    setAttribute(parts.bears, 'd', sector(foot, reach, 180 + onPage(0), 180 + onPage(bears)));
-    setAttribute(parts.gap, 'd', sector(foot, reach, 180 + onPage(bears), 180 + onPage(lean)));
+    setAttribute(parts.bears, 'd', sector(foot, reach, 180 + onPage(0), 180 + onPage(limitDeg)));
+    setAttribute(parts.gap, 'd', sector(foot, reach, 180 + onPage(limitDeg), 180 + onPage(lean)));
     setAttribute(parts.gap, 'data-lacks', String(margin < 0));
     setAttribute(parts.limit, 'd', line(foot, moved(foot, [limit, reach + 6])));
     setAttribute(parts.force, 'd', line(foot, neck));

@@ -67,7 +67,7 @@ export function createTurnPictures({ onPick }) {
     if (!drawn) return;
     const { shown, answer, question, units } = drawn;
     section.update({
-      pitchDeg: question.pitch_deg, phaseDeg: shown.phaseDeg, leanDeg: shown.leanDeg,
+      tiltDeg: shown.tiltDeg, limitDeg: shown.limitDeg, leanDeg: shown.leanDeg,
       edgeDeg: shown.edgeDeg, margin: shown.margin,
       words: { lean: t('picture.lean'), edge: t('picture.edge'), force: t('picture.force'),
         limit: shown.limit ? t(`limit.${shown.limit}`) : '', none: t('picture.noBalance') },
@@ -90,7 +90,7 @@ export function createTurnPictures({ onPick }) {
     /** The hill alone, while there is no answer. */
     preview(pitchDeg) {
       if (drawn) return;
-      bare = { pitchDeg, phaseDeg: 180, leanDeg: null, edgeDeg: null, margin: null, words: { none: '' } };
+      bare = { tiltDeg: pitchDeg, limitDeg: null, leanDeg: null, edgeDeg: null, margin: null, words: { none: '' } };
       draw();
     },
     /** @param {{shown: any, answer: any, question: any, units: any, old: string}} next `old`: why this

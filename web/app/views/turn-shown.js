@@ -20,12 +20,6 @@ export function driftLeads(answer) {
   return answer.verdict === 'too_fast' && answer.drift !== null;
 }
 
-/** Where in the turn a phase lies, as the engine's reason names it. */
-export function zoneOf(phaseDeg) {
-  if (phaseDeg < 80) return 'above';
-  return phaseDeg <= 100 ? 'on' : 'below';
-}
-
 /**
  * @param {any} answer the turn's answer
  * @param {any} wider where the drifted line leads: the answer for the turn on that line, if any
@@ -42,10 +36,13 @@ export function shownTurn(answer, wider, picked) {
   const failDeg = ride.first_fail_phase_deg;
   return {
     drifts, source, key, index, picked: picked !== null, phaseDeg,
-    zone: picked === null && !drifts ? answer.reason.zone : zoneOf(phaseDeg),
+    placeZone: ride.zone[index],
+    zone: picked === null && !drifts ? answer.reason.zone : ride.zone[index],
     leanDeg: valueAt(source, key('lean_deg')),
     edgeDeg: valueAt(source, key('edge_angle_deg')),
     margin: valueAt(source, key('grip_margin')),
+    limitDeg: valueAt(source, key('limit_lean_deg')),
+    tiltDeg: ride.section_tilt_deg[index],
     limit: valueAt(source, key('limit')),
     state: ride.state[index],
     phases: ride.phase_deg,

@@ -2,7 +2,6 @@
 
 import { t } from '../text.js';
 import { show } from '../units.js';
-import { zoneOf } from './turn-shown.js';
 
 /** The verdict's reason, one sentence. */
 export function why({ reason: { state, limit, zone } }) {
@@ -17,7 +16,7 @@ export function caption(shown, answer, units) {
   if (shown.drifts) {
     return t('picture.atDrift', { phase, radius: show('tightest', answer.drift.line_radius_m, units) });
   }
-  if (shown.leanDeg === null) return t('picture.at', { phase, zone: t(`zone.${zoneOf(shown.phaseDeg)}`) });
+  if (shown.leanDeg === null) return t('picture.at', { phase, zone: t(`zone.${shown.placeZone}`) });
   return t(shown.zone === 'whole' ? 'picture.atWhole' : 'picture.atWorst', { phase, zone: t(`zone.${shown.zone}`) });
 }
 
