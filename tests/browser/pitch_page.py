@@ -174,4 +174,4 @@ def pitch(installed) -> Iterator[Page]:
         page.on("console", lambda one: said.append(one.text) if one.type == "error" else None)
         open_pitch(page, url)
         yield page
-        assert said == []
+        assert said == [], said

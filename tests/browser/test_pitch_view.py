@@ -62,6 +62,17 @@ def test_the_main_path_by_touch(pitch):
     shows(pitch, asked, snowhold.answer(asked))
 
 
+def test_a_tap_that_is_over_before_it_is_heard_of(pitch):
+    """A busy phone tells of the finger when it has gone: the place counts all the same."""
+    slope = pitch.get_by_role("slider", name="Place of the fall")
+    box = slope.bounding_box()
+    assert box
+    slope.dispatch_event("pointerdown", {
+        "pointerId": 99, "button": 0, "clientX": box["x"] + box["width"] / 2,
+        "clientY": box["y"] + box["height"] / 2})
+    expect(slope).not_to_have_attribute("aria-valuenow", "0")
+
+
 def test_a_pitch_of_one_leg_takes_two_entries(pitch):
     pitch.get_by_role("button", name="Enter your own slope").tap()
     expect(field(pitch, "legs[0].pitch_deg")).to_be_focused()

@@ -54,3 +54,15 @@ export function setShown(node, shown) {
   // As an attribute: SVG nodes have no such property.
   setAttribute(node, 'hidden', !shown);
 }
+
+/**
+ * Keeps a drag on a node. On a busy phone a tap may be over before it is heard of; then there is
+ * nothing to keep, and the browser would throw.
+ * @param {Element} node
+ * @param {PointerEvent} event
+ */
+export function keepPointer(node, { pointerId }) {
+  try {
+    node.setPointerCapture(pointerId);
+  } catch { /* let go already: a tap */ }
+}

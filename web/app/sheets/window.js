@@ -1,6 +1,6 @@
 /** The speed window over pitch: seen, tapped and dragged; beside it the speeds that people ride. */
 
-import { el, setAttribute, setAttributes, setShown, setText } from '../dom.js';
+import { el, keepPointer, setAttribute, setAttributes, setShown, setText } from '../dom.js';
 import { createFigure } from '../figure.js';
 import { createMeasured } from '../pictures/measured.js';
 import { createWindowPicture } from '../pictures/window.js';
@@ -75,7 +75,7 @@ export function createWindowSheet({ store, engine, echo, onChange, reference }) 
   }
   function grabbed(event) {
     if (event.button !== 0 || !contours) return;
-    box.node.setPointerCapture(event.pointerId);
+    keepPointer(box.node, event);
     store.seal();
     place(event);
   }

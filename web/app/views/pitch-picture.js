@@ -1,6 +1,6 @@
 /** The drawn slope, on which the place of the fall is chosen by sliding along the snow. */
 
-import { el, setAttribute, setAttributes, setText, svg } from '../dom.js';
+import { el, keepPointer, setAttribute, setAttributes, setText, svg } from '../dom.js';
 import { createProfile, WAYS } from '../pictures/profile.js';
 import { t } from '../text.js';
 import { show } from '../units.js';
@@ -37,11 +37,13 @@ export function createPitchPicture({ onPick, onSettled }) {
   }
   function grabbed(event) {
     if (!drawn || event.button !== 0) return;
-    scrub.setPointerCapture(event.pointerId);
-    dragged(event);
+    keepPointer(scrub, event);
+    place(event);
   }
   function dragged(event) {
-    if (!drawn || !scrub.hasPointerCapture(event.pointerId)) return;
+    if (drawn && scrub.hasPointerCapture(event.pointerId)) place(event);
+  }
+  function place(event) {
     pick(profile.placeAt(event.clientX - scrub.getBoundingClientRect().left));
   }
   function keyed(event) {

@@ -1,6 +1,6 @@
 /** The two pictures of a turn, and the scrubber that looks at any place in it. */
 
-import { el, setAttribute, setAttributes, setShown, setText } from '../dom.js';
+import { el, keepPointer, setAttribute, setAttributes, setShown, setText } from '../dom.js';
 import { createAbove } from '../pictures/above.js';
 import { createSection } from '../pictures/section.js';
 import { t } from '../text.js';
@@ -42,7 +42,7 @@ export function createTurnPictures({ onPick }) {
   }
   function grabbed(event) {
     if (!drawn || event.button !== 0) return;
-    scrub.setPointerCapture(event.pointerId);
+    keepPointer(scrub, event);
     place(event);
   }
   function dragged(event) {
