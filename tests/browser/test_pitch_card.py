@@ -33,7 +33,8 @@ def test_state_survives_a_closed_tab_and_works_offline(pitch, installed):
     context, url, host = installed
     asked = set_slope(pitch, "stops")
     pitch.wait_for_timeout(500)
-    pitch.close(run_before_unload=True)
+    with pitch.expect_event("close"):
+        pitch.close(run_before_unload=True)
     host.stop()
     try:
         again = context.new_page()
